@@ -1,0 +1,46 @@
+import type { PowerLawPiece } from "../numerics/power-law.js";
+
+/**
+ * Anything that has a one-sided power density at every frequency of its support: a fitted model, straight lines through
+ * points, a sum. Powers add, so everything inside the library is power density (unit²/Hz); the amplitude density a
+ * datasheet prints (unit/√Hz) is its square root.
+ */
+export interface Spectrum {
+  /** Unit of the signal: "V" means a density in V/√Hz and a power density in V²/Hz. */
+  readonly unit: string;
+  /** Hz, where the power density is defined; outside it the library refuses. */
+  readonly support: readonly [number, number];
+  /** Hz, ascending, inside the support: where it bends, so that integrators place panel edges there. */
+  readonly knots: readonly number[];
+  /** S ~ f^−lowExponent towards the low end of the support (0 Hz): decides convergence before integrating. */
+  readonly lowExponent: number;
+  /** S ~ f^−highExponent towards the high end (∞ Hz). */
+  readonly highExponent: number;
+  /** Power density in unit²/Hz at a frequency inside the support. */
+  powerDensityAt(hz: number): number;
+  /** Where the spectrum IS a sum of power laws on intervals that tile its support: exact integrals and moments. */
+  readonly pieces?: readonly PowerLawPiece[];
+  /** Hz, where points support it; outside is assumption and its share of the power is reported. */
+  readonly pointsSpan?: readonly [number, number];
+  /** What its uncertainty rests on; independent groups add in power. */
+  readonly sensitivities?: readonly Sensitivity[];
+  /** Sentences a report must print: what was assumed beyond the points, what was left out. */
+  readonly notes?: readonly string[];
+}
+
+/**
+ * One group of correlated parameters and how the logarithm of the power density answers to each of them.
+ * Band noise propagates uncertainty through this and needs to know nothing of fits or points.
+ */
+export interface Sensitivity {
+  /** What the parameters are, for a report: "points", "fit", "axis", "exponent below the points". */
+  readonly name: string;
+  /** Number of parameters in the group. */
+  readonly count: number;
+  /** Covariance matrix of the parameters, row by row, count × count. */
+  readonly covariance: readonly (readonly number[])[];
+  /** Hz, ascending: where the gradients bend. */
+  readonly knots: readonly number[];
+  /** Writes d ln S / d parameter at a frequency into `gradient` (length `count`). */
+  gradientAt(hz: number, gradient: Float64Array): void;
+}

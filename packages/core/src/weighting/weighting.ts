@@ -1,0 +1,70 @@
+import type { PowerLawPiece } from "../numerics/power-law.js";
+
+/**
+ * A power gain |H(f)|²: a filter, a digital filter, a tabulated gain, a standard curve, or a cascade of them.
+ * Besides its value it carries what integrators need to know beforehand, and whatever makes an exact route possible.
+ */
+export interface Weighting {
+  /** What it is in words, for reports: "Butterworth low-pass, order 2, 5 Hz". */
+  readonly name: string;
+  /** Hz, where the gain is defined. */
+  readonly support: readonly [number, number];
+  /** Hz, ascending, inside the support: corners, resonances, table points. */
+  readonly knots: readonly number[];
+  /** |H|² ~ f^−lowExponent towards 0 Hz: 0 for a low-pass, −2n for a high-pass of order n. */
+  readonly lowExponent: number;
+  /** |H|² ~ f^−highExponent towards ∞: 2n for a low-pass of order n; 0 where it goes on oscillating. */
+  readonly highExponent: number;
+  /** Power gain at a frequency inside the support, 0 Hz included. */
+  powerGainAt(hz: number): number;
+  /** Where the gain IS power laws on intervals (a table in dB over log f): exact products with power-law spectra. */
+  readonly pieces?: readonly PowerLawPiece[];
+  /** |H|² as poles and zeros: closed routes by partial fractions. */
+  readonly rational?: RationalGain;
+  /** |H|² = u^(2·numeratorOrder) / (1 + u^(2·order)), u = f/cutoffHz: first order and Butterworth, one closed integral. */
+  readonly saturating?: SaturatingGain;
+  /** Lobes: how an integrator crosses any number of them with bounded work. */
+  readonly lobes?: LobedGain;
+}
+
+/** A complex number in Hz (s/2π). */
+export interface ComplexHz {
+  readonly re: number;
+  readonly im: number;
+}
+
+/** |H(f)|² = gain · f^(2·zerosAtOrigin) · Π|jf − zero|² / Π|jf − pole|²; complex ones are listed with their conjugates. */
+export interface RationalGain {
+  readonly gain: number;
+  readonly zerosAtOrigin: number;
+  readonly zeros: readonly ComplexHz[];
+  readonly poles: readonly ComplexHz[];
+}
+
+/** See {@link Weighting.saturating}. */
+export interface SaturatingGain {
+  readonly cutoffHz: number;
+  readonly order: number;
+  readonly numeratorOrder: number;
+}
+
+/**
+ * |H(f)|² = Σ over parts of envelopeAt(f) · Σ_j amplitude_j · cos(2π f seconds_j): smooth envelopes times slow or fast
+ * cosines. A moving average over T is one part, envelope (πfT)⁻² and cosines ½ − ½ cos(2πfT). The form is closed under
+ * products, so a cascade of lobed gains is one. Integrators use it where a panel holds many lobes; where it holds few,
+ * or near 0 Hz, they take `powerGainAt`, which does not cancel.
+ */
+export interface LobedGain {
+  /** Hz, the distance between neighbouring zeros or dips: the width that a panel must resolve or count. */
+  readonly lobeHz: number;
+  readonly parts: readonly LobedPart[];
+  /** Hz after which the whole gain repeats exactly (a digital filter); envelopes may peak at its multiples. */
+  readonly repeatsHz?: number;
+}
+
+/** One part of a {@link LobedGain}. */
+export interface LobedPart {
+  /** Smooth between multiples of `repeatsHz`, of either sign. */
+  envelopeAt(hz: number): number;
+  readonly cosines: readonly { readonly seconds: number; readonly amplitude: number }[];
+}

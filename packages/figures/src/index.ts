@@ -1,0 +1,4 @@
+// convert
+// chain
+// judge
+// show
