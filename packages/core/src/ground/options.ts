@@ -11,7 +11,7 @@ export function completeOptions<Options extends object>(
 ): Options {
   const known = Object.keys(defaults);
   refuseUnknownKeys(where, known, given);
-  const complete: Record<string, unknown> = { ...defaults };
+  const complete: Record<string, unknown> = Object.fromEntries(Object.entries(defaults));
   for (const [key, value] of Object.entries(given ?? {})) if (value !== undefined) complete[key] = value;
   return complete as Options;
 }
