@@ -1,6 +1,3 @@
-// ground
-
-// curve
 export type { Curve, CurvePoint, CurveSourceEntry } from "./curve/curve.js";
 export {
   DivergentIntegralError,
@@ -10,13 +7,10 @@ export {
   type NoiseErrorCode,
   OutOfDomainError,
 } from "./ground/errors.js";
-// numerics
 export type { PowerLawPiece, PowerLawTerm } from "./numerics/power-law.js";
 export { type PowerLaw, powerLaws } from "./spectrum/power-laws.js";
-// spectrum
 export type { Sensitivity, Spectrum } from "./spectrum/spectrum.js";
 export { type WhiteFlickerOptions, whiteFlicker } from "./spectrum/white-flicker.js";
-// weighting
 export type {
   ComplexHz,
   LobedGain,
@@ -25,6 +19,3 @@ export type {
   SaturatingGain,
   Weighting,
 } from "./weighting/weighting.js";
-// band
-// fit
-// record

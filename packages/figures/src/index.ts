@@ -1,4 +1,1 @@
-// convert
-// chain
-// judge
-// show
+export {};
