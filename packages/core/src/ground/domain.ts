@@ -51,5 +51,6 @@ function inUnit(unit: string): string {
 
 function shown(value: unknown): string {
   if (typeof value === "string") return `the text "${value.slice(0, 40)}"`;
-  return value === undefined ? "nothing" : String(value);
+  if (typeof value === "number" || typeof value === "boolean") return String(value);
+  return value === undefined || value === null ? "nothing" : "something that is no number";
 }

@@ -20,6 +20,10 @@ export interface Spectrum {
   powerDensityAt(hz: number): number;
   /** Where the spectrum IS a sum of power laws on intervals that tile its support: exact integrals and moments. */
   readonly pieces?: readonly PowerLawPiece[];
+  /** Where it is a sum whose parts are not all power laws: each part integrates by its own route. */
+  readonly parts?: readonly Spectrum[];
+  /** Where it is a spectrum multiplied by a tone: integrals run in offsets from the tone, where nothing cancels. */
+  readonly skirt?: ToneSkirtForm;
   /** Hz, where points support it; outside is assumption and its share of the power is reported. */
   readonly pointsSpan?: readonly [number, number];
   /** What its uncertainty rests on; independent groups add in power. */
@@ -43,4 +47,12 @@ export interface Sensitivity {
   readonly knots: readonly number[];
   /** Writes d ln S / d parameter at a frequency into `gradient` (length `count`). */
   gradientAt(hz: number, gradient: Float64Array): void;
+}
+
+/** S_out(f) = powerGain · (S(|f − toneHz|) + S(f + toneHz)), zero closer to the tone than leaveOutHz. */
+export interface ToneSkirtForm {
+  readonly base: Spectrum;
+  readonly toneHz: number;
+  readonly powerGain: number;
+  readonly leaveOutHz: number;
 }
