@@ -31,7 +31,7 @@ export interface ToneSkirtOptions {
  * import { bandNoise, toneSkirt, whiteFlicker } from "@quietband/core";
  * const reference = whiteFlicker({ floor: 100e-9, cornerHz: 10 });
  * const skirt = toneSkirt(reference, { toneHz: 1000, amplitude: 2, reference: 2.5, leaveOutHz: 0.1 });
- * bandNoise(skirt, { fromHz: 900, toHz: 1100 }).rms; // → 0.9270e-6
+ * bandNoise(skirt, { fromHz: 900, toHz: 1100 }).rms; // → 928.44e-9
  * ```
  */
 export function toneSkirt(spectrum: Spectrum, options: ToneSkirtOptions): Spectrum {

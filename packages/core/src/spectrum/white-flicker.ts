@@ -25,7 +25,7 @@ export interface WhiteFlickerOptions {
  * ```ts
  * import { bandNoise, whiteFlicker } from "@quietband/core";
  * const reference = whiteFlicker({ floor: 70e-9, cornerHz: 60 });
- * bandNoise(reference, { fromHz: 0.1, toHz: 10 }).rms; // → 1.186e-6
+ * bandNoise(reference, { fromHz: 0.1, toHz: 10 }).rms; // → 1.184e-6
  * ```
  */
 export function whiteFlicker({ floor, cornerHz, exponent = 1, unit = "V" }: WhiteFlickerOptions): Spectrum {
