@@ -7,13 +7,13 @@ import { expectRelative } from "../support/relative.js";
 // stored companion, printed answers from memory (fixtures/published/worked_examples_1f_white.json).
 interface Example {
   readonly id: string;
-  readonly problem: Readonly<Record<string, number | string>>;
+  readonly problem?: Readonly<Record<string, number | string>>;
   readonly publishedMicrovolts: number;
   readonly halfUnit: number;
 }
 
-const simple = published<Example>("worked_examples_1f_white").values.filter(
-  ({ problem }) => problem?.["whiteFloorVPerRtHz"] !== undefined && problem["shape"] === "brick-wall",
+const simple = published<Example>("worked_examples_1f_white").values.flatMap(({ problem, ...rest }) =>
+  problem?.["whiteFloorVPerRtHz"] !== undefined && problem["shape"] === "brick-wall" ? [{ ...rest, problem }] : [],
 );
 
 test("there are three worked examples of 1/f and white noise", () => expect(simple).toHaveLength(3));

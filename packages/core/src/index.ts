@@ -5,7 +5,7 @@ export { type NoiseBandwidth, noiseBandwidth } from "./band/noise-bandwidth.js";
 export { type RunningNoise, type RunningNoiseOptions, runningNoise } from "./band/running-noise.js";
 export { type SpectralMoment, spectralMoment } from "./band/spectral-moment.js";
 export type { UncertaintyPart } from "./band/uncertainty.js";
-export type { Curve, CurvePoint, CurveSourceEntry } from "./curve/curve.js";
+export type { CommonEffect, Curve, CurvePoint, CurveSourceEntry } from "./curve/curve.js";
 export {
   DivergentIntegralError,
   MalformedDataError,

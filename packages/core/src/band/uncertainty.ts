@@ -43,18 +43,26 @@ export function uncertaintyParts(
 }
 
 function uncertaintyOf(group: Sensitivity, nodes: Float64Array, power: Float64Array, total: number): number {
-  const gradient = new Float64Array(group.count);
   const response = new Float64Array(group.count);
   for (let k = 0; k < nodes.length; k += 1) {
-    group.gradientAt(nodes[k] as number, gradient);
-    for (let p = 0; p < group.count; p += 1)
-      response[p] = (response[p] as number) + (gradient[p] as number) * (power[k] as number);
+    const weight = power[k] as number;
+    group.gradientAt(nodes[k] as number, (parameter, slope) => {
+      response[parameter] = (response[parameter] as number) + slope * weight;
+    });
   }
+  return (0.5 * Math.sqrt(Math.max(varianceOf(group.covariance, response), 0))) / total;
+}
+
+function varianceOf(covariance: Sensitivity["covariance"], response: Float64Array): number {
   let variance = 0;
-  for (let row = 0; row < group.count; row += 1)
-    for (let column = 0; column < group.count; column += 1)
-      variance += (response[row] as number) * (response[column] as number) * (group.covariance[row]?.[column] ?? 0);
-  return (0.5 * Math.sqrt(Math.max(variance, 0))) / total;
+  if ("variances" in covariance) {
+    for (const [index, own] of covariance.variances.entries()) variance += own * (response[index] as number) ** 2;
+    return variance;
+  }
+  for (const [row, values] of covariance.matrix.entries())
+    for (const [column, value] of values.entries())
+      variance += value * (response[row] as number) * (response[column] as number);
+  return variance;
 }
 
 function ruleFor(
@@ -68,5 +76,5 @@ function ruleFor(
   const low = fromHz === 0 ? Math.min(...finite) * 1e-8 : fromHz;
   const high = toHz === Number.POSITIVE_INFINITY ? Math.max(...finite) * 1e8 : toHz;
   const edges = [...new Set([low, ...knots, high])].toSorted((one, other) => one - other);
-  return adaptiveRule(productOf(spectrum, weighting), edges, { relativeTolerance: 1e-6, mostPanels: 400 });
+  return adaptiveRule(productOf(spectrum, weighting), edges, { relativeTolerance: 1e-6, mostHalvings: 400 });
 }

@@ -26,8 +26,18 @@ export interface Curve {
   readonly uncertaintyIs: "given" | "assumed";
   /** Relative standard uncertainty of an error common to all points (a misread axis); 0 when none was stated. */
   readonly commonUncertainty: number;
+  /** Errors that points share but feel differently: the calibration of a plot's axes. Independent of each other. */
+  readonly commonEffects?: readonly CommonEffect[];
   /** Where it comes from: `key: value` pairs in the order given (document, figure, conditions, stated figures ...). */
   readonly source: readonly CurveSourceEntry[];
+}
+
+/** One standard deviation of a shared error and what it does to each point. */
+export interface CommonEffect {
+  /** "frequency axis", "density axis". */
+  readonly name: string;
+  /** Relative change of the density of each point, in the order of the points. */
+  readonly effects: readonly number[];
 }
 
 /** One line of provenance; `key` is empty for a free remark. */

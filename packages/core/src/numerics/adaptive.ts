@@ -8,11 +8,11 @@ export type PanelFunction = (nodes: Float64Array, values: Float64Array) => void;
 export interface AdaptiveOptions {
   /** Aim for the discretisation error, relative to the integral. */
   readonly relativeTolerance: number;
-  /** Panels after which the driver stops and says so. */
-  readonly mostPanels: number;
+  /** Halvings after which the driver stops and says so. */
+  readonly mostHalvings: number;
 }
 
-export const adaptiveDefaults: AdaptiveOptions = Object.freeze({ relativeTolerance: 1e-13, mostPanels: 4000 });
+export const adaptiveDefaults: AdaptiveOptions = Object.freeze({ relativeTolerance: 1e-13, mostHalvings: 4000 });
 
 /** An integral with a bound on its absolute error; `converged` is false when the tolerance was not reached. */
 export interface Integral {
@@ -34,8 +34,6 @@ interface Panel {
   readonly value: number;
   /** |Kronrod − Gauss|. */
   readonly difference: number;
-  /** The last halving shrank the difference like that of a kink, not of an analytic function. */
-  readonly rough: boolean;
   /** Discretisation error that further halving can reduce. */
   readonly reducible: number;
   /** Rounding of the nodes and values, which halving cannot. */
@@ -86,7 +84,7 @@ export function adaptiveRule(
 function refine(
   integrand: PanelFunction,
   edges: readonly number[],
-  { relativeTolerance, mostPanels }: AdaptiveOptions,
+  { relativeTolerance, mostHalvings }: AdaptiveOptions,
 ): { readonly panels: Panel[]; readonly converged: boolean; readonly evaluations: number } {
   const nodes = new Float64Array(kronrodCount);
   const values = new Float64Array(kronrodCount);
@@ -101,6 +99,7 @@ function refine(
     const to = edges[index] as number;
     if (to > from) panels.push(measure(from, to));
   }
+  const first = panels.length;
   for (;;) {
     let total = 0;
     let reducible = 0;
@@ -116,7 +115,7 @@ function refine(
     if (reducible <= goal || worst < 0) return { panels, converged: true, evaluations };
     const panel = panels[worst] as Panel;
     const middle = Math.sqrt(panel.from) * Math.sqrt(panel.to);
-    if (panels.length >= mostPanels || !(middle > panel.from && middle < panel.to))
+    if (panels.length - first >= mostHalvings || !(middle > panel.from && middle < panel.to))
       return { panels, converged: false, evaluations };
     panels[worst] = measure(panel.from, middle, panel);
     panels.push(measure(middle, panel.to, panel));
@@ -166,21 +165,9 @@ function measurePanel(
     to,
     value: half * kronrod,
     difference,
-    rough,
-    reducible: Math.max(
-      rough ? 4 * difference : discretisationError(difference, half * spread),
-      inheritedError(parent),
-    ),
+    reducible: rough ? 4 * difference : discretisationError(difference, half * spread),
     floor,
   };
-}
-
-/**
- * Inside a panel with a kink the two rules can agree by chance. After a rough halving the error of a child is taken
- * to be no less than a tenth of its parent's: the half with the kink has a quarter of it.
- */
-function inheritedError(parent: Panel | undefined): number {
-  return parent?.rough === true ? 0.1 * parent.reducible : 0;
 }
 
 /**

@@ -1,43 +1,25 @@
-import type { Curve } from "../curve/curve.js";
+import type { CommonEffect, Curve } from "../curve/curve.js";
 import type { Sensitivity } from "./spectrum.js";
 
 /**
  * How a polyline answers to the densities of its points: d ln S / d ln e_i = 2 · hat_i, the hat being 1 at point i and
- * falling linearly in ln f to its neighbours; beyond the ends the last point carries everything.
+ * falling linearly in ln f to its neighbours; beyond the ends the last point carries everything. Errors that points
+ * share come as groups of their own.
  */
-export function pointSensitivities(curve: Curve): Sensitivity[] {
-  const { points, commonUncertainty } = curve;
+export function pointSensitivities({ points, commonUncertainty, commonEffects = [] }: Curve): Sensitivity[] {
   const hz = Object.freeze(points.map((point) => point.frequency));
-  const logs = Float64Array.from(hz, Math.log);
-  const count = points.length;
-  const groups: Sensitivity[] = [
-    Object.freeze({
-      name: "points",
-      count,
-      covariance: Object.freeze(
-        points.map(({ uncertainty }, row) =>
-          Object.freeze(points.map((_, column) => (row === column ? uncertainty * uncertainty : 0))),
-        ),
-      ),
-      knots: hz,
-      gradientAt(at: number, gradient: Float64Array): void {
-        gradient.fill(0);
-        const x = Math.log(at);
-        let right = 0;
-        while (right < count && (logs[right] as number) <= x) right += 1;
-        if (right === 0) gradient[0] = 2;
-        else if (right === count) gradient[count - 1] = 2;
-        else {
-          const left = logs[right - 1] as number;
-          const share = (x - left) / ((logs[right] as number) - left);
-          gradient[right - 1] = 2 * (1 - share);
-          gradient[right] = 2 * share;
-        }
-      },
-    }),
-  ];
-  if (commonUncertainty > 0) groups.push(commonSensitivity("axis", commonUncertainty));
-  return groups;
+  const hats = hatsOver(hz);
+  const own: Sensitivity = Object.freeze({
+    name: "points",
+    count: points.length,
+    covariance: Object.freeze({ variances: Object.freeze(points.map(({ uncertainty }) => uncertainty * uncertainty)) }),
+    knots: hz,
+    gradientAt(at: number, visit: (parameter: number, slope: number) => void): void {
+      hats(at, (index, share) => visit(index, 2 * share));
+    },
+  });
+  const axis = commonUncertainty > 0 ? [commonSensitivity("axis", commonUncertainty)] : [];
+  return [own, ...axis, ...commonEffects.map((effect) => effectSensitivity(effect, hz, hats))];
 }
 
 /** A relative error of the density that all frequencies share (a misread axis): d ln S / d ln e = 2 everywhere. */
@@ -45,11 +27,9 @@ export function commonSensitivity(name: string, relativeUncertainty: number): Se
   return Object.freeze({
     name,
     count: 1,
-    covariance: Object.freeze([Object.freeze([relativeUncertainty * relativeUncertainty])]),
+    covariance: Object.freeze({ variances: Object.freeze([relativeUncertainty * relativeUncertainty]) }),
     knots: Object.freeze([]),
-    gradientAt(_: number, gradient: Float64Array): void {
-      gradient[0] = 2;
-    },
+    gradientAt: (_: number, visit: (parameter: number, slope: number) => void) => visit(0, 2),
   });
 }
 
@@ -58,11 +38,49 @@ export function exponentSensitivity(side: "below" | "above", edgeHz: number, sta
   return Object.freeze({
     name: `exponent ${side} the points`,
     count: 1,
-    covariance: Object.freeze([Object.freeze([standardUncertainty * standardUncertainty])]),
+    covariance: Object.freeze({ variances: Object.freeze([standardUncertainty * standardUncertainty]) }),
     knots: Object.freeze([edgeHz]),
-    gradientAt(hz: number, gradient: Float64Array): void {
-      const beyond = side === "below" ? hz < edgeHz : hz > edgeHz;
-      gradient[0] = beyond ? -Math.log(hz / edgeHz) : 0;
+    gradientAt(hz: number, visit: (parameter: number, slope: number) => void): void {
+      if (side === "below" ? hz < edgeHz : hz > edgeHz) visit(0, -Math.log(hz / edgeHz));
+    },
+  });
+}
+
+type Hats = (hz: number, visit: (index: number, share: number) => void) => void;
+
+/** The one or two hats that are not zero at a frequency, and their shares. */
+function hatsOver(hz: readonly number[]): Hats {
+  const logs = Float64Array.from(hz, Math.log);
+  const last = logs.length - 1;
+  return (at, visit) => {
+    const x = Math.log(at);
+    if (x <= (logs[0] as number)) return visit(0, 1);
+    if (x >= (logs[last] as number)) return visit(last, 1);
+    let low = 0;
+    let high = last;
+    while (high - low > 1) {
+      const middle = (low + high) >> 1;
+      if ((logs[middle] as number) <= x) low = middle;
+      else high = middle;
+    }
+    const share = (x - (logs[low] as number)) / ((logs[high] as number) - (logs[low] as number));
+    visit(low, 1 - share);
+    visit(high, share);
+  };
+}
+
+function effectSensitivity({ name, effects }: CommonEffect, hz: readonly number[], hats: Hats): Sensitivity {
+  return Object.freeze({
+    name,
+    count: 1,
+    covariance: Object.freeze({ variances: Object.freeze([1]) }),
+    knots: hz,
+    gradientAt(at: number, visit: (parameter: number, slope: number) => void): void {
+      let slope = 0;
+      hats(at, (index, share) => {
+        slope += 2 * share * (effects[index] ?? 0);
+      });
+      visit(0, slope);
     },
   });
 }

@@ -41,12 +41,12 @@ export interface Sensitivity {
   readonly name: string;
   /** Number of parameters in the group. */
   readonly count: number;
-  /** Covariance matrix of the parameters, row by row, count × count. */
-  readonly covariance: readonly (readonly number[])[];
+  /** Their covariance: variances where they are independent (a traced curve has 1e5 points), else the matrix by rows. */
+  readonly covariance: { readonly variances: readonly number[] } | { readonly matrix: readonly (readonly number[])[] };
   /** Hz, ascending: where the gradients bend. */
   readonly knots: readonly number[];
-  /** Writes d ln S / d parameter at a frequency into `gradient` (length `count`). */
-  gradientAt(hz: number, gradient: Float64Array): void;
+  /** Calls `visit` with d ln S / d parameter at a frequency, for every parameter for which it is not zero. */
+  gradientAt(hz: number, visit: (parameter: number, slope: number) => void): void;
 }
 
 /** S_out(f) = powerGain · (S(|f − toneHz|) + S(f + toneHz)), zero closer to the tone than leaveOutHz. */

@@ -76,10 +76,9 @@ function sharesOf(part: Spectrum, spectra: readonly Spectrum[]): Sensitivity[] {
   return (part.sensitivities ?? []).map((sensitivity) =>
     Object.freeze({
       ...sensitivity,
-      gradientAt(hz: number, gradient: Float64Array): void {
-        sensitivity.gradientAt(hz, gradient);
+      gradientAt(hz: number, visit: (parameter: number, slope: number) => void): void {
         const share = part.powerDensityAt(hz) / totalAt(spectra, hz);
-        for (let k = 0; k < sensitivity.count; k += 1) gradient[k] = (gradient[k] as number) * share;
+        sensitivity.gradientAt(hz, (parameter, slope) => visit(parameter, slope * share));
       },
     }),
   );

@@ -72,18 +72,15 @@ function knotsAround(toneHz: number, leaveOutHz: number, knots: readonly number[
 
 /** Both images answer to the same parameters, in proportion to their power. */
 function aroundTone(group: Sensitivity, spectrum: Spectrum, toneHz: number): Sensitivity {
-  const other = new Float64Array(group.count);
   return Object.freeze({
     ...group,
     knots: Object.freeze(knotsAround(toneHz, 0, group.knots)),
-    gradientAt(hz: number, gradient: Float64Array): void {
+    gradientAt(hz: number, visit: (parameter: number, slope: number) => void): void {
       const offset = Math.abs(hz - toneHz);
       const near = spectrum.powerDensityAt(offset);
       const far = spectrum.powerDensityAt(hz + toneHz);
-      group.gradientAt(offset, gradient);
-      group.gradientAt(hz + toneHz, other);
-      for (let k = 0; k < group.count; k += 1)
-        gradient[k] = ((gradient[k] as number) * near + (other[k] as number) * far) / (near + far);
+      group.gradientAt(offset, (parameter, slope) => visit(parameter, (slope * near) / (near + far)));
+      group.gradientAt(hz + toneHz, (parameter, slope) => visit(parameter, (slope * far) / (near + far)));
     },
   });
 }
