@@ -22,12 +22,24 @@ export function uncertaintyParts(
 ): readonly UncertaintyPart[] {
   const groups = spectrum.sensitivities ?? [];
   if (groups.length === 0) return [];
-  const rule = ruleFor(
-    spectrum,
-    weighting,
-    band,
-    groups.flatMap((group) => [...group.knots]),
+  const responses = groupResponses(spectrum, groups, weighting, band);
+  return Object.freeze(
+    groups.map(({ name, covariance }, index) => {
+      const variance = varianceOf(covariance, responses[index] as Float64Array);
+      return Object.freeze({ name, relative: Math.sqrt(Math.max(variance, 0)) });
+    }),
   );
+}
+
+/** d ln rms / d parameter over a band, for every parameter of each group. */
+export function groupResponses(
+  spectrum: Spectrum,
+  groups: readonly Sensitivity[],
+  weighting: Weighting | undefined,
+  band: readonly [number, number],
+): Float64Array[] {
+  const bends = groups.flatMap((group) => [...group.knots]);
+  const rule = ruleFor(spectrum, weighting, band, bends);
   const power = new Float64Array(rule.nodes.length);
   productOf(spectrum, weighting)(rule.nodes, power);
   let total = 0;
@@ -35,22 +47,17 @@ export function uncertaintyParts(
     power[k] = (power[k] as number) * (rule.weights[k] as number);
     total += power[k] as number;
   }
-  return Object.freeze(
-    groups.map((group) =>
-      Object.freeze({ name: group.name, relative: total === 0 ? 0 : uncertaintyOf(group, rule.nodes, power, total) }),
-    ),
-  );
-}
-
-function uncertaintyOf(group: Sensitivity, nodes: Float64Array, power: Float64Array, total: number): number {
-  const response = new Float64Array(group.count);
-  for (let k = 0; k < nodes.length; k += 1) {
-    const weight = power[k] as number;
-    group.gradientAt(nodes[k] as number, (parameter, slope) => {
-      response[parameter] = (response[parameter] as number) + slope * weight;
-    });
-  }
-  return (0.5 * Math.sqrt(Math.max(varianceOf(group.covariance, response), 0))) / total;
+  return groups.map((group) => {
+    const response = new Float64Array(group.count);
+    if (total === 0) return response;
+    for (let k = 0; k < power.length; k += 1) {
+      const share = (0.5 * (power[k] as number)) / total;
+      group.gradientAt(rule.nodes[k] as number, (parameter, slope) => {
+        response[parameter] = (response[parameter] as number) + slope * share;
+      });
+    }
+    return response;
+  });
 }
 
 function varianceOf(covariance: Sensitivity["covariance"], response: Float64Array): number {

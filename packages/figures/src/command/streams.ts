@@ -1,0 +1,11 @@
+/** What a command may touch of the world; tests hand in their own. */
+export interface Streams {
+  /** All of standard input. */
+  readInput(): string;
+  readFile(path: string): string;
+  writeFile(path: string, text: string): void;
+  /** Standard output. */
+  print(text: string): void;
+  /** Standard error. */
+  complain(text: string): void;
+}
