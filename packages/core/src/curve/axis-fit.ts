@@ -146,9 +146,10 @@ function fitLinear(pixels: readonly number[], places: readonly AxisCoordinates[]
   if (over.includes("v")) plain.push(({ v }) => v - mean.v);
   const basis: ((at: AxisCoordinates) => number)[] = [];
   for (const candidate of plain) {
-    const shares = basis.map((made) => places.reduce((sum, at) => sum + made(at) * candidate(at), 0));
+    const made = [...basis];
+    const shares = made.map((earlier) => places.reduce((sum, at) => sum + earlier(at) * candidate(at), 0));
     const rest = (at: AxisCoordinates): number =>
-      basis.reduce((value, made, index) => value - (shares[index] ?? 0) * made(at), candidate(at));
+      made.reduce((value, earlier, index) => value - (shares[index] ?? 0) * earlier(at), candidate(at));
     const before = Math.sqrt(places.reduce((sum, at) => sum + candidate(at) ** 2, 0));
     const norm = Math.sqrt(places.reduce((sum, at) => sum + rest(at) ** 2, 0));
     if (!(norm > 1e-6 * before))

@@ -41,7 +41,7 @@ export function requireConsistentTicks(
   if (placed.length < 3) return;
   const limit = Math.max(8 * sigma, leastSuspicious);
   if (worstOff(placed) <= limit && inOrder(placed)) return;
-  const suspects = findSuspects(placed, limit);
+  const suspects = findSuspects(placed, limit, name === "frequency" ? 1 : -1);
   const said = (index: number): string => `tick ${index + 1} (${ticks[index]?.value} at pixel ${ticks[index]?.pixel})`;
   if (suspects === undefined)
     throw new MalformedDataError(
@@ -54,37 +54,57 @@ export function requireConsistentTicks(
   );
 }
 
-/** The one tick, else the pair, whose removal leaves a line; the best of several. Undefined when no removal does. */
-function findSuspects(placed: readonly Placed[], limit: number): readonly number[] | undefined {
+/**
+ * The one tick without which the rest lie on one line, else the two that lie on it once swapped. Three ticks of four can
+ * lie on a line by accident when two are swapped; then the fourth would be far off, and the swap is the likelier mistake.
+ * Swapping the outer or the inner two of four can both give a line: the usual direction of the axis decides.
+ */
+function findSuspects(placed: readonly Placed[], limit: number, usual: 1 | -1): readonly number[] | undefined {
   const indices = placed.map((_, index) => index);
-  const singles = indices.map((index) => [index]);
-  const pairs = indices.flatMap((one) => indices.filter((other) => other > one).map((other) => [one, other]));
-  for (const candidates of [singles, pairs]) {
-    let best: readonly number[] | undefined;
-    let least = limit;
-    for (const out of candidates) {
-      const rest = placed.filter((_, index) => !out.includes(index));
-      if (rest.length < (out.length === 1 ? 3 : 2) || !inOrder(rest)) continue;
-      const off = rest.length === 2 ? swapResidual(placed, out) : worstOff(rest);
-      if (off <= least) {
-        least = off;
-        best = out;
-      }
-    }
-    if (best !== undefined) return best;
-  }
-  return undefined;
+  const single = best(
+    indices.map((index) => [index]),
+    limit,
+    ([out]) => {
+      const rest = placed.filter((_, index) => index !== out);
+      return rest.length >= 3 && inOrder(rest) ? worstOff(rest) : Number.POSITIVE_INFINITY;
+    },
+  );
+  const pair = best(
+    indices.flatMap((one) => indices.filter((other) => other > one).map((other) => [one, other])),
+    limit,
+    ([one, other]) => {
+      const back = swapped(placed, one as number, other as number);
+      const against = Math.sign(lineThrough(back).slope) === usual ? 0 : 0.5 * limit;
+      return inOrder(back) ? worstOff(back) + against : Number.POSITIVE_INFINITY;
+    },
+  );
+  if (single === undefined || pair === undefined) return single ?? pair;
+  const pixels = placed.map(({ pixel }) => pixel);
+  const spacing = (Math.max(...pixels) - Math.min(...pixels)) / (placed.length - 1);
+  return distanceFromOthers(placed, single, single[0] as number) > 1.5 * spacing ? pair : single;
 }
 
-/** With two ticks left any line fits; a swapped pair shows by fitting once swapped back. */
-function swapResidual(placed: readonly Placed[], [one, other]: readonly number[]): number {
-  const a = placed[one as number] as Placed;
-  const b = placed[other as number] as Placed;
-  const swapped = placed.map((tick, index) => {
+function best(
+  candidates: readonly (readonly number[])[],
+  limit: number,
+  offWithout: (out: readonly number[]) => number,
+): readonly number[] | undefined {
+  let found: readonly number[] | undefined;
+  let least = limit;
+  for (const out of candidates) {
+    const off = offWithout(out);
+    if (off <= least) [found, least] = [out, off];
+  }
+  return found;
+}
+
+function swapped(placed: readonly Placed[], one: number, other: number): readonly Placed[] {
+  const a = placed[one] as Placed;
+  const b = placed[other] as Placed;
+  return placed.map((tick, index) => {
     if (index === one) return { pixel: tick.pixel, coordinate: b.coordinate };
     return index === other ? { pixel: tick.pixel, coordinate: a.coordinate } : tick;
   });
-  return worstOff(swapped);
 }
 
 function inOrder(placed: readonly Placed[]): boolean {
