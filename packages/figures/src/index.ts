@@ -1,1 +1,11 @@
-export {};
+export { csvTable } from "./show/csv-table.js";
+export type { DensityInterval, DensityModel, DensityPlotOptions } from "./show/density-options.js";
+export { densityPlot } from "./show/density-plot.js";
+export type { LinePlotAxis, LinePlotOptions, PlotMark, PlotSeries } from "./show/line-options.js";
+export { linePlot } from "./show/line-plot.js";
+export { markdownTable } from "./show/markdown-table.js";
+export { type ResidualRow, residualBars } from "./show/residual-bars.js";
+export { type RunningNoiseCurve, type RunningNoisePlotOptions, runningNoisePlot } from "./show/running-noise-plot.js";
+export { type ShareBarsOptions, type ShareRow, shareBars } from "./show/share-bars.js";
+export type { Table, TableCell, TableColumn } from "./show/table.js";
+export { textTable } from "./show/text-table.js";

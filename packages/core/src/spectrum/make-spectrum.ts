@@ -4,7 +4,7 @@ import type { Spectrum } from "./spectrum.js";
 
 type Extras = Pick<Spectrum, "pointsSpan" | "sensitivities" | "notes">;
 
-/** A spectrum from pieces that tile its support: value, knots and end exponents all follow from them. */
+/** A spectrum from new pieces that tile its support: value, knots and end exponents all follow from them. */
 export function spectrumFromPieces(unit: string, pieces: readonly PowerLawPiece[], extras: Extras = {}): Spectrum {
   const first = pieces[0];
   const last = pieces.at(-1);
@@ -48,6 +48,9 @@ function pieceIndex(upperEdges: Float64Array, hz: number): number {
   return low;
 }
 
+/** In place: the pieces are the maker's own. */
 function frozenPiece(piece: PowerLawPiece): PowerLawPiece {
-  return Object.freeze({ ...piece, terms: Object.freeze(piece.terms.map((term) => Object.freeze({ ...term }))) });
+  for (const term of piece.terms) Object.freeze(term);
+  Object.freeze(piece.terms);
+  return Object.freeze(piece);
 }
