@@ -2,10 +2,26 @@ export { type BandEdge, type BandEdgeOptions, bandEdgeFor } from "./band/band-ed
 export { type BandNoise, type BandNoiseOptions, bandNoise } from "./band/band-noise.js";
 export { type FoldedSpectrumOptions, foldedSpectrum } from "./band/folded-spectrum.js";
 export { type NoiseBandwidth, noiseBandwidth } from "./band/noise-bandwidth.js";
+export { type PointCost, type PointCostOptions, pointCost } from "./band/point-cost.js";
+export { type PreparedBand, prepareBand } from "./band/prepare-band.js";
 export { type RunningNoise, type RunningNoiseOptions, runningNoise } from "./band/running-noise.js";
 export { type SpectralMoment, spectralMoment } from "./band/spectral-moment.js";
 export type { UncertaintyPart } from "./band/uncertainty.js";
+export {
+  type AxesCalibration,
+  type AxesDescription,
+  type AxisDescription,
+  calibrateAxes,
+  type ReferencePoint,
+  type TickResidual,
+} from "./curve/calibrate-axes.js";
 export type { CommonEffect, Curve, CurvePoint, CurveSourceEntry } from "./curve/curve.js";
+export { type CurveOptions, curveFromPoints, type GivenPoint } from "./curve/curve-from-points.js";
+export { type PathOptions, pointsFromPath } from "./curve/points-from-path.js";
+export { type PicksOptions, pointsFromPicks } from "./curve/points-from-picks.js";
+export { readCurve } from "./curve/read-curve.js";
+export { thinCurve } from "./curve/thin-curve.js";
+export { writeCurve } from "./curve/write-curve.js";
 export {
   DivergentIntegralError,
   MalformedDataError,
@@ -14,6 +30,9 @@ export {
   type NoiseErrorCode,
   OutOfDomainError,
 } from "./ground/errors.js";
+export { type Quantity, type ReadQuantityOptions, readQuantity } from "./ground/quantity.js";
+export { readBand } from "./ground/read-band.js";
+export { type WriteQuantityOptions, writeQuantity } from "./ground/write-quantity.js";
 export type { PowerLawPiece, PowerLawTerm } from "./numerics/power-law.js";
 export type { Beyond, BeyondSide } from "./spectrum/beyond.js";
 export { type FunctionSpectrumOptions, functionSpectrum } from "./spectrum/function-spectrum.js";
@@ -24,11 +43,39 @@ export type { Sensitivity, Spectrum, ToneSkirtForm } from "./spectrum/spectrum.j
 export { sumSpectra } from "./spectrum/sum-spectra.js";
 export { type ToneSkirtOptions, toneSkirt } from "./spectrum/tone-skirt.js";
 export { type WhiteFlickerOptions, whiteFlicker } from "./spectrum/white-flicker.js";
+export { aWeighting } from "./weighting/a-weighting.js";
+export { averageOfReadings } from "./weighting/average-of-readings.js";
+export { besselLowPass } from "./weighting/bessel-low-pass.js";
+export { type BandPassOptions, butterworthBandPass } from "./weighting/butterworth-band-pass.js";
+export { butterworthHighPass } from "./weighting/butterworth-high-pass.js";
+export { butterworthLowPass } from "./weighting/butterworth-low-pass.js";
+export { cWeighting } from "./weighting/c-weighting.js";
+export { cascade } from "./weighting/cascade.js";
+export { type ChebyshevOptions, chebyshevLowPass } from "./weighting/chebyshev-low-pass.js";
+export { firFilter } from "./weighting/fir-filter.js";
+export { firstOrderHighPass } from "./weighting/first-order-high-pass.js";
+export { firstOrderLowPass } from "./weighting/first-order-low-pass.js";
+export { gain } from "./weighting/gain.js";
+export { type GainTableRow, gainTable } from "./weighting/gain-table.js";
+export { identicalPoles } from "./weighting/identical-poles.js";
+export { type IirFilterOptions, iirFilter } from "./weighting/iir-filter.js";
+export { movingAverage } from "./weighting/moving-average.js";
+export { type PolesAndZerosOptions, polesAndZeros } from "./weighting/poles-and-zeros.js";
+export { programmeWeighting } from "./weighting/programme-weighting.js";
+export { recordMeanRemoved } from "./weighting/record-mean-removed.js";
+export { recordTrendRemoved } from "./weighting/record-trend-removed.js";
+export { resonator } from "./weighting/resonator.js";
+export { sampleDifference } from "./weighting/sample-difference.js";
+export { secondOrderLowPass } from "./weighting/second-order-low-pass.js";
+export { type SincDecimatorOptions, sincDecimator } from "./weighting/sinc-decimator.js";
+export { telephoneWeighting } from "./weighting/telephone-weighting.js";
+export { twoSampleVariance } from "./weighting/two-sample-variance.js";
 export type {
   ComplexHz,
   LobedGain,
   LobedPart,
   RationalGain,
   SaturatingGain,
+  Wave,
   Weighting,
 } from "./weighting/weighting.js";

@@ -86,7 +86,7 @@ function foldedKnots(knots: readonly number[], rate: number): number[] {
 /** Lobes whose cosines are in step with the sampler stay put from image to image; others would sweep through the images. */
 function requireAligned(weighting: Weighting, rate: number): void {
   for (const part of weighting.lobes?.parts ?? [])
-    for (const { seconds } of part.cosines) {
+    for (const { seconds } of part.waves) {
       const turns = seconds * rate;
       if (Math.abs(turns - Math.round(turns)) > 1e-9 * Math.max(turns, 1))
         throw new OutOfDomainError(

@@ -44,7 +44,7 @@ export function noiseBandwidth(
   const relativeTo = options.relativeTo ?? (dc > 0 ? "dc" : "peak");
   if (relativeTo === "dc" && dc === 0)
     throw new OutOfDomainError(`${weighting.name} has no gain at 0 Hz to relate to; ask for relativeTo: 'peak'.`);
-  const repeats = weighting.lobes?.repeatsHz;
+  const repeats = weighting.repeatsHz;
   const band = [first, repeats === undefined ? last : Math.min(last, 0.5 * repeats)] as const;
   const white = powerLaws([{ coefficient: 1, exponent: 0 }], { unit: "1" });
   requireConvergent(white, weighting, ...band);

@@ -1,7 +1,7 @@
 import type { Complex } from "./complex.js";
 
 /** Continued-fraction steps beyond which a point counts as too close to −1. */
-const mostSteps = 150;
+const mostSteps = 400;
 
 /**
  * Σ (−y)^k/(s+k) for s > 0 and complex |y| ≤ 1 off the negative axis: Lerch's Φ(−y, 1, s), so that

@@ -1,4 +1,5 @@
-import { type Complex, over, size, times } from "./complex.js";
+import { type Complex, conjugate, minus, over, plus, sizeOf, squareDifference, times } from "./complex.js";
+import type { SquarePole } from "./pole-integral.js";
 
 /** gain · x^(2·zerosAtOrigin) · Π|jx − zero|² / Π|jx − pole|²; complex ones are listed with their conjugates. */
 export interface RationalShape {
@@ -8,24 +9,27 @@ export interface RationalShape {
   readonly poles: readonly Complex[];
 }
 
-/** A root b of |H|², in the right half plane and the upper half of it: |jx − p|² of it and its conjugate is (x²+b²)(x²+b̄²). */
-interface Root {
+/** Equal roots of |H|² at b = −p, moved to the upper right quarter: with its conjugate |jx − p|² is (x² + b²)(x² + b̄²). */
+export interface Root {
   readonly b: Complex;
+  readonly multiplicity: number;
   /** 2 where the conjugate is meant as well, 1 on the real axis. */
   readonly count: number;
 }
 
-/** One root of the denominator. */
-export interface FractionPole extends Root {
-  readonly ln: number;
-  readonly angle: number;
-  /** Entry i belongs to x^(2(zerosAtOrigin − i)) / (x² + b²). */
-  readonly residues: readonly Complex[];
+export interface FractionPole extends Root, SquarePole {
+  /** Entry [i][m − 1] belongs to x^(2(zerosAtOrigin − i)) / (x² + c)^m. */
+  readonly residues: readonly (readonly Residue[])[];
+}
+
+export interface Residue extends Complex {
+  /** What it would be if nothing had cancelled: its error is some roundings of this. */
+  readonly size: number;
 }
 
 /**
- * For every i for which there are residues, with z = zerosAtOrigin and x in `unit`s,
- * |H|² = x^(2(z−i)) Σ_k residue_ki/(x² + b_k²) + whole · x^(2z), the sum over roots and their conjugates.
+ * For every i for which there are residues, with z = zerosAtOrigin and x in `unit`s, |H|² = whole · x^(2z)
+ * + x^(2(z−i)) Σ_k Σ_m residue_kim/(x² + c_k)^m, the sum over poles and their conjugates.
  */
 export interface PartialFractions {
   /** A power of two near the geometric mean of the poles: x is divided by it, exactly. */
@@ -36,104 +40,132 @@ export interface PartialFractions {
   readonly zeros: readonly Root[];
 }
 
-/** Poles closer than this, relative to their size, count as repeated. */
-const leastSeparation = 1e-4;
+/** Roots closer than this, relative to their size, are equal: a design may round them apart. */
+const equal = 1e-15;
+/** Poles closer than this and not equal are too clustered for partial fractions. */
+const clustered = 1e-4;
+const nothing: Residue = Object.freeze({ re: 0, im: 0, size: 0 });
 
 /**
- * Partial fractions in x² of a rational power gain, made once and used for any term and band by `rationalIntegral`. Residues
- * come from differences of poles, b_j² − b_k² = (b_j − b_k)(b_j + b_k), which do not cancel. Undefined where no such
- * form exists: no poles, more zeros than poles, a pole on the imaginary axis, repeated ones, or roots without their conjugates.
+ * Partial fractions in x² of a rational power gain, made once and used for any term and band by `rationalIntegral`.
+ * Residues are Taylor coefficients about a pole of the product of all other factors, whose differences,
+ * b_j² − b_k² = (b_j − b_k)(b_j + b_k), do not cancel. Undefined where no such form exists or it is useless: no poles, more
+ * zeros than poles, a pole on the imaginary axis, poles that are nearly but not quite equal, or roots without their conjugates.
  */
 export function preparePartialFractions(shape: RationalShape): PartialFractions | undefined {
   if (shape.poles.length === 0 || shape.zeros.length > shape.poles.length) return undefined;
   const unit = powerOfTwoNear(shape.poles);
   const poles = rootsOf(shape.poles, unit);
   const zeros = rootsOf(shape.zeros, unit);
-  if (poles === undefined || zeros === undefined || poles.some(({ b }) => !(b.re > 0))) return undefined;
-  const everyPole = poles.flatMap(withConjugate);
-  const everyZero = zeros.flatMap(withConjugate);
-  if (!separate(everyPole)) return undefined;
-  const excess = everyPole.length - everyZero.length;
-  const gain = scaled(shape.gain, Math.log2(unit) * 2 * (shape.zerosAtOrigin - excess));
+  if (poles === undefined || zeros === undefined || !separate(poles.flatMap(each))) return undefined;
+  const excess = shape.poles.length - shape.zeros.length;
+  const gain = timesPowerOfTwo(shape.gain, 2 * Math.log2(unit) * (shape.zerosAtOrigin - excess));
   if (!(gain > 0 && gain < Number.POSITIVE_INFINITY)) return undefined;
   return Object.freeze({
     unit,
     zerosAtOrigin: shape.zerosAtOrigin,
     whole: excess === 0 ? gain : 0,
-    poles: Object.freeze(poles.map((root) => fractionPole(root, gain, everyPole, everyZero))),
+    poles: Object.freeze(poles.map((root) => fractionPole(root, gain, poles, zeros))),
     zeros: Object.freeze(zeros),
   });
 }
 
-function fractionPole(root: Root, gain: number, poles: readonly Complex[], zeros: readonly Complex[]): FractionPole {
-  const { b, count } = root;
-  let residue: Complex = { re: gain, im: 0 };
-  // Alternating keeps the running product within range for filters of high order.
-  let used = 0;
-  for (const pole of poles) {
-    if (pole === b) continue;
-    residue = over(residue, squareDifference(pole, b));
-    const zero = zeros[used];
-    if (zero === undefined) continue;
-    residue = times(residue, squareDifference(zero, b));
-    used += 1;
+function fractionPole(root: Root, gain: number, poles: readonly Root[], zeros: readonly Root[]): FractionPole {
+  const { b, multiplicity } = root;
+  const others = poles.flatMap(each).filter((pole) => pole !== b);
+  const everyZero = zeros.flatMap(each);
+  let series = Array.from({ length: multiplicity }, (_, k) => ({
+    re: k === 0 ? gain : 0,
+    im: 0,
+    size: k === 0 ? gain : 0,
+  }));
+  // Poles and zeros in turn keep the product within range at high orders.
+  for (let k = 0; k < Math.max(others.length, everyZero.length); k += 1) {
+    const [pole, at] = [others[k], everyZero[k]];
+    if (pole !== undefined) series = dividedBy(series, squareDifference(pole, b));
+    if (at !== undefined) series = multipliedBy(series, squareDifference(at, b));
   }
-  for (const zero of zeros.slice(used)) residue = times(residue, squareDifference(zero, b));
-  const turn = times(b, { re: -b.re, im: -b.im });
-  const residues = [residue];
-  while (residues.length < poles.length - zeros.length) residues.push((residue = times(residue, turn)));
+  const c = times(b, b);
+  const residues = [series];
+  for (let left = others.length + multiplicity - everyZero.length; left > 1; left -= 1) {
+    series = multipliedBy(series, { re: -c.re, im: -c.im });
+    residues.push(series);
+  }
   return Object.freeze({
-    b,
-    count,
-    ln: Math.log(size(b)),
+    ...root,
+    c,
+    ln: Math.log(sizeOf(b)),
     angle: Math.atan2(b.im, b.re),
-    residues: Object.freeze(residues),
+    residues: Object.freeze(residues.map((taylor) => Object.freeze(taylor.toReversed()))),
   });
 }
 
-function squareDifference(one: Complex, other: Complex): Complex {
-  return times(
-    { re: one.re - other.re, im: one.im - other.im },
-    { re: one.re + other.re, im: one.im + other.im },
-  );
+/** A power series in h = X + c times shift + h. */
+function multipliedBy(series: readonly Residue[], shift: Complex): Residue[] {
+  const scale = sizeOf(shift);
+  return series.map((term, k) => {
+    const before = series[k - 1] ?? nothing;
+    return { ...plus(times(term, shift), before), size: term.size * scale + before.size };
+  });
 }
 
-/** The upper half of each pair, moved to the right half plane, which leaves |jx − root| as it is; undefined without pairs. */
+/** A power series in h over shift + h. */
+function dividedBy(series: readonly Residue[], shift: Complex): Residue[] {
+  const scale = 1 / sizeOf(shift);
+  let before = nothing;
+  return series.map((term) => {
+    before = { ...over(minus(term, before), shift), size: scale * (term.size + before.size) };
+    return before;
+  });
+}
+
+/** The upper half of each pair, in units, in the right half plane, equal ones counted; undefined where a conjugate is missing. */
 function rootsOf(listed: readonly Complex[], unit: number): Root[] | undefined {
   const lower = listed.filter(({ im }) => im < 0);
   const roots: Root[] = [];
   for (const root of listed) {
     if (root.im < 0) continue;
+    if (root.im > 0) {
+      const mate = lower.findIndex((other) => near(conjugate(other), root));
+      if (mate < 0) return undefined;
+      lower.splice(mate, 1);
+    }
     const b = Object.freeze({ re: Math.abs(root.re) / unit, im: root.im / unit });
-    roots.push(Object.freeze({ b, count: root.im === 0 ? 1 : 2 }));
-    if (root.im === 0) continue;
-    const mate = lower.findIndex(({ re, im }) => Math.abs(re - root.re) + Math.abs(im + root.im) <= 1e-15 * size(root));
-    if (mate < 0) return undefined;
-    lower.splice(mate, 1);
+    const same = roots.findIndex((other) => near(other.b, b));
+    const multiplicity = 1 + (roots[same]?.multiplicity ?? 0);
+    const counted = Object.freeze({ b: roots[same]?.b ?? b, multiplicity, count: root.im === 0 ? 1 : 2 });
+    if (same < 0) roots.push(counted);
+    else roots[same] = counted;
   }
   return lower.length === 0 ? roots : undefined;
 }
 
-function withConjugate({ b, count }: Root): Complex[] {
-  return count === 1 ? [b] : [b, { re: b.re, im: -b.im }];
+function near(first: Complex, second: Complex): boolean {
+  return sizeOf(minus(first, second)) <= equal * sizeOf(first);
+}
+
+/** A root and its conjugate, each as often as it occurs. */
+function each({ b, count, multiplicity }: Root): Complex[] {
+  const pair = count === 1 ? [b] : [b, conjugate(b)];
+  return Array.from({ length: multiplicity }, () => pair).flat();
 }
 
 function separate(poles: readonly Complex[]): boolean {
-  return poles.every((one, index) =>
-    poles
-      .slice(index + 1)
-      .every((other) => size({ re: one.re - other.re, im: one.im - other.im }) > leastSeparation * size(one)),
+  return poles.every(
+    (pole, index) =>
+      pole.re > 0 &&
+      poles.slice(index + 1).every((other) => other === pole || sizeOf(minus(pole, other)) > clustered * sizeOf(pole)),
   );
 }
 
 function powerOfTwoNear(poles: readonly Complex[]): number {
   let sum = 0;
-  for (const pole of poles) sum += Math.log2(size(pole));
+  for (const pole of poles) sum += Math.log2(sizeOf(pole));
   return 2 ** Math.round(sum / poles.length);
 }
 
 /** value · 2^power, also where 2^power alone is out of range. */
-function scaled(value: number, power: number): number {
+function timesPowerOfTwo(value: number, power: number): number {
   const half = Math.trunc(power / 2);
   return value * 2 ** half * 2 ** (power - half);
 }

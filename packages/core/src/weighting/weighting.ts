@@ -23,6 +23,8 @@ export interface Weighting {
   readonly rational?: RationalGain;
   /** |H|² = u^(2·numeratorOrder) / (1 + u^(2·order)), u = f/cutoffHz: first order and Butterworth, one closed integral. */
   readonly saturating?: SaturatingGain;
+  /** Hz after which the whole gain repeats exactly: the rate of a digital filter. */
+  readonly repeatsHz?: number;
   /** Lobes: how an integrator crosses any number of them with bounded work. */
   readonly lobes?: LobedGain;
 }
@@ -49,22 +51,29 @@ export interface SaturatingGain {
 }
 
 /**
- * |H(f)|² = Σ over parts of envelopeAt(f) · Σ_j amplitude_j · cos(2π f seconds_j): smooth envelopes times slow or fast
- * cosines. A moving average over T is one part, envelope (πfT)⁻² and cosines ½ − ½ cos(2πfT). The form is closed under
- * products, so a cascade of lobed gains is one. Integrators use it where a panel holds many lobes; where it holds few,
- * or near 0 Hz, they take `powerGainAt`, which does not cancel.
+ * |H(f)|² = Σ over parts of envelopeAt(f) · Σ_j (cosine_j · cos(2π f seconds_j) + sine_j · sin(2π f seconds_j)): smooth
+ * envelopes times slow or fast waves. A moving average over T is one part, envelope (πfT)⁻² and waves ½ − ½ cos(2πfT). The
+ * form is closed under products, so a cascade of lobed gains is one. Integrators use it where a panel holds many lobes;
+ * where it holds few, or near 0 Hz, they take `powerGainAt`, which does not cancel.
  */
 export interface LobedGain {
   /** Hz, the distance between neighbouring zeros or dips: the width that a panel must resolve or count. */
   readonly lobeHz: number;
   readonly parts: readonly LobedPart[];
-  /** Hz after which the whole gain repeats exactly (a digital filter); envelopes may peak at its multiples. */
-  readonly repeatsHz?: number;
+  /** Hz: the envelopes peak at multiples of each of these (the rates of digital filters), and bend there. */
+  readonly peaksEveryHz: readonly number[];
 }
 
 /** One part of a {@link LobedGain}. */
 export interface LobedPart {
-  /** Smooth between multiples of `repeatsHz`, of either sign. */
+  /** Smooth between multiples of `peaksEveryHz`, of either sign. */
   envelopeAt(hz: number): number;
-  readonly cosines: readonly { readonly seconds: number; readonly amplitude: number }[];
+  readonly waves: readonly Wave[];
+}
+
+/** cosine · cos(2π f seconds) + sine · sin(2π f seconds), seconds ≥ 0. */
+export interface Wave {
+  readonly seconds: number;
+  readonly cosine: number;
+  readonly sine: number;
 }

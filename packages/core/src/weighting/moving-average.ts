@@ -1,0 +1,38 @@
+import { requirePositive } from "../ground/domain.js";
+import { sincSquared, turnsOf } from "../numerics/turns.js";
+import { inName, makeWeighting } from "./make-weighting.js";
+import { steady, wave } from "./waves.js";
+import type { Weighting } from "./weighting.js";
+
+/**
+ * Moving average over T: |H|² = (sin(πfT)/(πfT))².
+ *
+ * @param options - `seconds`, the length of the average T.
+ * @throws OutOfDomainError for a length that is not positive and finite.
+ *
+ * @example
+ * ```ts
+ * import { movingAverage, noiseBandwidth } from "@quietband/core";
+ * noiseBandwidth(movingAverage({ seconds: 0.02 })).hz; // → 25.000
+ * ```
+ */
+export function movingAverage({ seconds }: { readonly seconds: number }): Weighting {
+  requirePositive("seconds", seconds, "s");
+  return makeWeighting({
+    name: `moving average, ${inName(seconds)} s`,
+    knots: [1 / seconds],
+    lowExponent: 0,
+    highExponent: 2,
+    lobes: {
+      lobeHz: 1 / seconds,
+      peaksEveryHz: [],
+      parts: [
+        {
+          envelopeAt: (hz: number) => 1 / (Math.PI * hz * seconds) ** 2,
+          waves: [steady(0.5), wave(seconds, -0.5)],
+        },
+      ],
+    },
+    powerGainAt: (hz: number) => sincSquared(hz * seconds, turnsOf(hz, seconds)),
+  });
+}

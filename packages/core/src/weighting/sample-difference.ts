@@ -1,0 +1,40 @@
+import { requirePositive } from "../ground/domain.js";
+import { turnsOf } from "../numerics/turns.js";
+import { inName, makeWeighting } from "./make-weighting.js";
+import { steady, wave } from "./waves.js";
+import type { Weighting } from "./weighting.js";
+
+/**
+ * Difference of two samples τ apart (correlated double sampling): |H|² = 4 sin²(πfτ).
+ *
+ * White noise doubles in power; noise well below 1/(2πτ) cancels. The gain repeats without end, so a band needs an upper edge
+ * or a filter besides.
+ *
+ * @param options - `seconds`, the time τ between the samples.
+ * @throws OutOfDomainError for a time that is not positive and finite.
+ *
+ * @example
+ * ```ts
+ * import { sampleDifference } from "@quietband/core";
+ * sampleDifference({ seconds: 1e-3 }).powerGainAt(500); // → 4.000
+ * ```
+ */
+export function sampleDifference({ seconds }: { readonly seconds: number }): Weighting {
+  requirePositive("seconds", seconds, "s");
+  return makeWeighting({
+    name: `difference of samples ${inName(seconds)} s apart`,
+    knots: [0.5 / seconds],
+    lowExponent: -2,
+    highExponent: 0,
+    repeatsHz: 1 / seconds,
+    lobes: {
+      lobeHz: 1 / seconds,
+      peaksEveryHz: [],
+      parts: [{ envelopeAt: () => 1, waves: [steady(2), wave(seconds, -2)] }],
+    },
+    powerGainAt(hz: number): number {
+      const sine = Math.sin(Math.PI * turnsOf(hz, seconds));
+      return 4 * sine * sine;
+    },
+  });
+}
