@@ -44,7 +44,10 @@ export function writeQuantity(value: number, unit: string, { digits }: WriteQuan
     throw new OutOfDomainError(`A quantity must be a finite number of ${unit}; got ${value}.`);
   const size = Math.abs(value);
   const squared = /²|\^2/.test(unit) && !unit.startsWith("m/s");
-  const plain = size === 0 || neverPrefixed.has(unit) || (size >= 0.01 && size < 1 && plainBelowOne.has(unit));
+  const plain =
+    size === 0 ||
+    neverPrefixed.has(unit.replace(/\/√Hz$/, "")) ||
+    (size >= 0.01 && size < 1 && plainBelowOne.has(unit));
   if (plain || squared) return join(rounded(value, digits), unit);
   // Rounding first: 999.96 of four digits is 1000, and its prefix the next one.
   const scientific = digits === undefined ? size : Number(size.toPrecision(digits));
