@@ -58,3 +58,8 @@ export function thinnedTicks(
   }
   return kept;
 }
+
+/** The decimal a tick stands for: steps add up with errors in their last bits. */
+export function decimal(value: number): number {
+  return Number(value.toPrecision(12));
+}

@@ -39,7 +39,9 @@ export function composePlot(
   );
   const runs = [...[...lines, ...guides.lines].flatMap((line) => line.runs), ...edges];
   return {
-    ...about,
+    title: about.title,
+    // A note may be cut in the picture; in the description it stands in full.
+    description: `${about.description} ${plan.note}`.trimEnd(),
     frame,
     shades: guides.shades,
     areas,

@@ -21,7 +21,7 @@ export function frequencyRange(options: DensityPlotOptions): Extent {
 function pointsRange({ curves = [], models = [], interval }: DensityPlotOptions): Extent | undefined {
   let range = positiveExtent(interval?.frequencies ?? []);
   for (const { points } of curves) range = joinExtents(range, positiveExtent(points.map(({ frequency }) => frequency)));
-  for (const { spectrum } of models) range = joinExtents(range, spectrum.pointsSpan);
+  for (const { spectrum } of models) range = joinExtents(range, positiveExtent(spectrum.pointsSpan ?? []));
   return range;
 }
 

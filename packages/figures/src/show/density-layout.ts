@@ -8,8 +8,8 @@ import type { Frame } from "./frame.js";
 import type { KeyEntry } from "./key.js";
 import type { PlotArea, PlotLayout } from "./plot-layout.js";
 import { pictureSize } from "./plot-options.js";
-import { quantityText } from "./quantity-text.js";
 import { seriesStyle } from "./series-style.js";
+import { tickLabel } from "./tick-label.js";
 
 /** Lays out a density plot: every position in pixels, every text, nothing drawn yet. */
 export function layoutDensityPlot(options: DensityPlotOptions): PlotLayout {
@@ -21,12 +21,12 @@ export function layoutDensityPlot(options: DensityPlotOptions): PlotLayout {
     ...pictureSize(options),
     title,
     note,
-    x: { kind: "log", domain: frequencies, title: "frequency", label: (value: number) => quantityText(value, "Hz") },
+    x: { kind: "log", domain: frequencies, title: "frequency", label: tickLabel("Hz") },
     y: {
       kind: "log",
       domain: densities,
       title: "noise density",
-      label: (value: number) => quantityText(value, `${unit}/√Hz`),
+      label: tickLabel(`${unit}/√Hz`),
     },
   } as const;
   return composePlot(

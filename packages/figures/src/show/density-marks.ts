@@ -1,9 +1,9 @@
 import type { DensityPlotOptions } from "./density-options.js";
+import { bandText, cornerText, floorText } from "./density-words.js";
 import { type Frame, textSize } from "./frame.js";
 import { dropGuide, type Guides, joinGuides, labelHeight, levelGuide, stretchGuide } from "./guides.js";
 import type { LabelRequest } from "./place-labels.js";
 import type { PlotMarker } from "./plot-layout.js";
-import { quantityText } from "./quantity-text.js";
 import { ink } from "./series-style.js";
 import { textWidth } from "./text-measure.js";
 
@@ -15,24 +15,15 @@ export function layoutMarks(
   markers: readonly PlotMarker[],
 ): Guides {
   const guides: Guides[] = [];
-  if (floor !== undefined)
-    guides.push(levelGuide(floor, `floor ${quantityText(floor, `${unit}/√Hz`, { digits: 4 })}`, frame));
+  if (floor !== undefined) guides.push(levelGuide(floor, floorText(floor, unit), frame));
   if (cornerHz !== undefined) {
     // From where the density is √2 above the floor, which is what a corner means.
     const top = floor === undefined ? frame.plot.y : frame.y.at(floor * Math.SQRT2);
-    guides.push(dropGuide(cornerHz, `corner ${quantityText(cornerHz, "Hz", { digits: 4 })}`, frame, top));
+    guides.push(dropGuide(cornerHz, cornerText(cornerHz), frame, top));
   }
-  if (band !== undefined) {
-    const text = `${bandEdgeText(band.fromHz)} to ${bandEdgeText(band.toHz)}`;
-    guides.push(stretchGuide([band.fromHz, band.toHz], text, frame));
-  }
+  if (band !== undefined) guides.push(stretchGuide([band.fromHz, band.toHz], bandText(band), frame));
   const labels = markers.filter(({ ring }) => ring).map(suspectLabel);
   return joinGuides([...guides, { shades: [], lines: [], labels }]);
-}
-
-/** A band edge in words; infinity has no unit. */
-export function bandEdgeText(hz: number): string {
-  return hz === Number.POSITIVE_INFINITY ? "∞" : quantityText(hz, "Hz", { digits: 6 });
 }
 
 function suspectLabel({ x, y }: PlotMarker): LabelRequest {

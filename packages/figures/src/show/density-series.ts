@@ -53,7 +53,7 @@ function seriesLooks(
   models: number,
 ): { readonly curves: readonly SeriesStyle[]; readonly models: readonly SeriesStyle[] } {
   const paired = curves === models;
-  const namedModels = Math.min(models, paired ? distinctSeries : Math.ceil(distinctSeries / 2));
+  const namedModels = Math.min(models, paired || curves === 0 ? distinctSeries : Math.ceil(distinctSeries / 2));
   const namedCurves = Math.min(curves, paired || models === 0 ? distinctSeries : distinctSeries - namedModels);
   const neutral = curves === 1 && models > 0;
   const curveLooks = Array.from({ length: namedCurves }, (_, index) => seriesStyle(index));
@@ -67,7 +67,7 @@ function seriesLooks(
 interface DrawnSeries {
   readonly lines: readonly PlotLine[];
   readonly markers: readonly PlotMarker[];
-  /** None for a model that is defined nowhere in the picture. */
+  /** None for a series that is nowhere in the picture. */
   readonly entry: KeyEntry | undefined;
   readonly beyond: boolean;
 }
@@ -95,11 +95,12 @@ function curveSeries(curve: Curve, work: CurveWork): DrawnSeries {
     ...(detail.markers ? { marker: { shape: look.marker, filled: true } } : {}),
   };
   const label = curve.label === "" ? "points" : curve.label;
-  const end = pixels.at(-1);
+  const visible = curve.points.filter(({ frequency }) => isShown(frequency, frame));
+  const end = visible.at(-1);
   return {
     lines: isLine ? [{ runs: [thinRun(pixels)], colour: look.colour, ...line }] : [],
-    markers: detail.markers ? curve.points.map((point) => pointMarker(point, work)) : [],
-    entry: end === undefined ? undefined : { label, swatch, level: levelInside(end[1], frame) },
+    markers: detail.markers ? visible.map((point) => pointMarker(point, work)) : [],
+    entry: end === undefined ? undefined : { label, swatch, level: levelInside(frame.y.at(end.density), frame) },
     beyond: false,
   };
 }
@@ -187,6 +188,10 @@ function explanations(drawn: readonly DrawnSeries[], curves: readonly Curve[]): 
   if (drawn.some(({ beyond }) => beyond))
     entries.push({ label: "beyond the points", swatch: { colour: ink.text, line: { dash: beyondDash, width: 2 } } });
   return entries;
+}
+
+function isShown(hz: number, { x }: Frame): boolean {
+  return hz >= x.domain[0] && hz <= x.domain[1];
 }
 
 function levelInside(y: number, { plot }: Frame): number {

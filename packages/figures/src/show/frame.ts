@@ -79,10 +79,10 @@ export function layoutFrame(plan: FramePlan): Frame {
   const noteLines = wrapText(plan.note, { size: textSize.note, width: inner, maxLines });
   const noteHeight = noteLines.length * noteLine + (noteLines.length > 0 ? 10 : 0);
   const bottom = height - margin - noteHeight - belowPlot;
-  const y = makeAxis(plan.y, [bottom, top], () => labelLine + 8);
+  const y = makeAxis(plan.y, width / 4, [bottom, top], () => labelLine + 8);
   const left = margin + 8 + Math.max(0, ...y.ticks.map((tick) => textWidth(tick.label, textSize.label)));
   const right = width - margin - plan.gutter;
-  const x = makeAxis(plan.x, [left, right], (label) => textWidth(label, textSize.label) + 14);
+  const x = makeAxis(plan.x, width / 4, [left, right], (label) => textWidth(label, textSize.label) + 14);
   const texts = [
     ...titleLines.map((text, index) =>
       textLine({
@@ -94,8 +94,14 @@ export function layoutFrame(plan: FramePlan): Frame {
         colour: ink.title,
       }),
     ),
-    textLine({ text: plan.y.title, x: margin, top: top - labelLine - axisTitleGap, colour: ink.faint }),
-    textLine({ text: plan.x.title, x: right, top: bottom + 8 + labelLine, anchor: "end", colour: ink.faint }),
+    textLine({ text: oneLine(plan.y.title, inner), x: margin, top: top - labelLine - axisTitleGap, colour: ink.faint }),
+    textLine({
+      text: oneLine(plan.x.title, right - margin),
+      x: right,
+      top: bottom + 8 + labelLine,
+      anchor: "end",
+      colour: ink.faint,
+    }),
     ...y.ticks.map((tick) => textLine({ text: tick.label, x: left - 8, top: tick.at - labelLine / 2, anchor: "end" })),
     ...x.ticks.map((tick) => tickLabelBelow(tick.label, tick.at, bottom + 8, width)),
     ...noteLines.map((text, index) =>
@@ -128,9 +134,16 @@ export function textLine(line: {
   return { text, x, y: top + size * ascent, size, anchor, colour, bold, box };
 }
 
-function makeAxis(plan: AxisPlan, range: readonly [number, number], room: AxisRequest["room"]): Axis {
-  const request = { domain: plan.domain, range, label: plan.label, room };
+function makeAxis(plan: AxisPlan, widest: number, range: readonly [number, number], room: AxisRequest["room"]): Axis {
+  // A unit may be a whole sentence: it must not push the plot off the paper.
+  const label: AxisRequest["label"] = (value, largest) => oneLine(plan.label(value, largest), widest);
+  const request = { domain: plan.domain, range, label, room };
   return plan.kind === "log" ? logAxis(request) : linearAxis(request);
+}
+
+/** A text that must stand on one line, cut where it is longer than that. */
+function oneLine(text: string, width: number): string {
+  return wrapText(text, { size: textSize.label, width, maxLines: 1 })[0] ?? "";
 }
 
 /** Centred under its tick, but never beyond the picture's edge. */

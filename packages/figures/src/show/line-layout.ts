@@ -7,8 +7,8 @@ import type { KeyEntry } from "./key.js";
 import { checkLineOptions, type LinePlotAxis, type LinePlotOptions, type PlotSeries } from "./line-options.js";
 import type { PlotLayout, PlotLine, PlotMarker } from "./plot-layout.js";
 import { pictureSize } from "./plot-options.js";
-import { quantityText } from "./quantity-text.js";
 import { distinctSeries, restStyle, type SeriesStyle, seriesStyle } from "./series-style.js";
+import { evenTickLabel, tickLabel } from "./tick-label.js";
 import { splitRuns, thinRun } from "./trace.js";
 
 /** Lays out a line plot; `where` names the function in messages. */
@@ -62,12 +62,11 @@ function axisPlan(
     const range = positiveExtent(values);
     if (range === undefined)
       throw new OutOfDomainError(`${what} is logarithmic and needs at least one finite value above zero; got none.`);
-    return { kind: "log", domain: airedLog(range, air, 2), title, label: (value) => quantityText(value, unit) };
+    return { kind: "log", domain: airedLog(range, air, 2), title, label: tickLabel(unit) };
   }
   const range = finiteExtent(standing === "on zero" ? [0, ...values] : values);
   if (range === undefined) throw new OutOfDomainError(`${what} needs at least one finite value; got none.`);
-  const label = (value: number, largest: number): string => quantityText(value, unit, { like: largest });
-  return { kind: "linear", domain: airedLinear(range, air), title, label };
+  return { kind: "linear", domain: airedLinear(range, air), title, label: evenTickLabel(unit) };
 }
 
 function seriesLine({ x, y }: PlotSeries, look: SeriesStyle, frame: Frame): PlotLine {

@@ -1,5 +1,5 @@
 import { scaleLinear, scaleLog } from "d3-scale";
-import { type Axis, type AxisRequest, type AxisTick, labelledTicks, thinnedTicks } from "./axis.js";
+import { type Axis, type AxisRequest, type AxisTick, decimal, labelledTicks, thinnedTicks } from "./axis.js";
 
 /**
  * A logarithmic axis. Of several ladders of round values (decades, every third, sixth ... decade; 1-3 and 1-2-5; every
@@ -75,10 +75,5 @@ function multiples(low: number, high: number, digits: readonly number[], stride:
 
 function evenSteps(low: number, high: number, count: number): Ladder {
   const steps = scaleLinear().domain([low, high]);
-  return { values: steps.ticks(count).map(clean), minor: steps.ticks(4 * count).map(clean) };
-}
-
-/** The decimal a tick stands for. */
-function clean(value: number): number {
-  return Number(value.toPrecision(12));
+  return { values: steps.ticks(count).map(decimal), minor: steps.ticks(4 * count).map(decimal) };
 }

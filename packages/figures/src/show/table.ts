@@ -1,5 +1,4 @@
-import { OutOfDomainError } from "@quietband/core";
-import { quantityText } from "./quantity-text.js";
+import { OutOfDomainError, writeQuantity } from "@quietband/core";
 
 /** One column of a table. */
 export interface TableColumn {
@@ -8,7 +7,7 @@ export interface TableColumn {
   readonly unit?: string | undefined;
   /** Numbers stand right and texts left unless given. */
   readonly align?: "left" | "right" | undefined;
-  /** Significant digits of numbers in text and Markdown; 4 unless given. CSV keeps all. */
+  /** Significant digits of numbers in text and Markdown, zeros included; up to 4 unless given. CSV keeps all. */
   readonly digits?: number | undefined;
 }
 
@@ -39,8 +38,10 @@ export function tableTexts({ columns, rows }: Table): readonly (readonly string[
   return rows.map((row) =>
     row.map((cell, index) => {
       if (typeof cell === "string") return cell;
-      const { unit = "", digits = usualDigits } = columns[index] as TableColumn;
-      return quantityText(cell, unit, { digits });
+      const { unit = "", digits } = columns[index] as TableColumn;
+      return digits === undefined
+        ? writeQuantity(Number(cell.toPrecision(usualDigits)), unit)
+        : writeQuantity(cell, unit, { digits });
     }),
   );
 }

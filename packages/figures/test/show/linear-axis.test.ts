@@ -14,6 +14,11 @@ test("labels fewer steps where they are wide", () => {
   expect(axis.ticks.map(({ value }) => value)).toEqual([0, 5]);
 });
 
+test("labels what leaves room where no step fits as a whole", () => {
+  const axis = linearAxis({ domain: [0, 10], range: [0, 60], label, room: (text) => (text === "0" ? 10 : 150) });
+  expect(axis.ticks.length).toBeGreaterThanOrEqual(1);
+});
+
 test("unlabelled lines never fall on labelled ones", () => {
   const axis = linearAxis({ domain: [990, 1010], range: [0, 500], label, room: () => 40 });
   const labelled = new Set(axis.ticks.map(({ at }) => at));

@@ -71,3 +71,20 @@ export function textsOf(root: XmlElement): readonly string[] {
     .filter(({ tag }) => tag === "text")
     .map(({ text }) => text);
 }
+
+/** Same elements, same words; coordinates may differ by what rounding to a hundredth of a pixel can make. */
+export function expectSamePicture(actual: XmlElement, stored: XmlElement): void {
+  expect(actual.tag).toBe(stored.tag);
+  expect(actual.text.trim()).toBe(stored.text.trim());
+  expect(Object.keys(actual.attributes)).toEqual(Object.keys(stored.attributes));
+  for (const [name, value] of Object.entries(actual.attributes)) {
+    const expected = stored.attributes[name] ?? "";
+    const [numbers, others] = [numbersIn(value), numbersIn(expected)];
+    expect(value.replace(/[\d.]+/g, "#")).toBe(expected.replace(/[\d.]+/g, "#"));
+    for (const [index, number] of numbers.entries())
+      expect(Math.abs(number - (others[index] ?? Number.NaN)), `${actual.tag} ${name}`).toBeLessThanOrEqual(0.011);
+  }
+  expect(actual.children.map(({ tag }) => tag)).toEqual(stored.children.map(({ tag }) => tag));
+  for (const [index, child] of actual.children.entries())
+    expectSamePicture(child, stored.children[index] as XmlElement);
+}
