@@ -32,7 +32,13 @@ export function layoutSeries(options: DensityPlotOptions, frame: Frame): Density
   const restModels = models.slice(looks.models.length).flatMap((model) => modelLines(model, restStyle, frame).lines);
   const drawnModels = looks.models.map((look, index) => modelSeries(models[index] as DensityModel, look, frame));
   const drawnCurves = looks.curves.map((look, index) =>
-    curveSeries(curves[index] as Curve, { look, frame, detail, suspects }),
+    curveSeries(curves[index] as Curve, {
+      look,
+      frame,
+      detail,
+      suspects,
+      unnamed: curves.length === 1 ? "points" : `curve ${index + 1}`,
+    }),
   );
   const drawn = [...drawnCurves, ...drawnModels];
   return {
@@ -82,6 +88,8 @@ interface CurveWork {
     readonly caps: number;
   };
   readonly suspects: ReadonlySet<number>;
+  /** What a curve without a label is called. */
+  readonly unnamed: string;
 }
 
 function curveSeries(curve: Curve, work: CurveWork): DrawnSeries {
@@ -94,7 +102,7 @@ function curveSeries(curve: Curve, work: CurveWork): DrawnSeries {
     ...(isLine ? { line } : {}),
     ...(detail.markers ? { marker: { shape: look.marker, filled: true } } : {}),
   };
-  const label = curve.label === "" ? "points" : curve.label;
+  const label = curve.label === "" ? work.unnamed : curve.label;
   const visible = curve.points.filter(({ frequency }) => isShown(frequency, frame));
   const end = visible.at(-1);
   return {

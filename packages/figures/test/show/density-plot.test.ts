@@ -355,6 +355,19 @@ describe("whatever there is to draw", () => {
     expect(expectSound(densityPlot({ ...demo, note })).children[1]?.text).toContain(note);
   });
 
+  test("curves without a label are told apart by number", () => {
+    const points = [
+      [1, 1e-8],
+      [100, 1e-9],
+    ] as const;
+    const named = (count: number): readonly string[] =>
+      layoutDensityPlot({ curves: Array.from({ length: count }, () => curveOf(points, "")) }).key.map(
+        ({ label }) => label,
+      );
+    expect(named(1)).toContain("points");
+    expect(named(2)).toEqual(expect.arrayContaining(["curve 1", "curve 2"]));
+  });
+
   test("twelve models without curves are all named", () => {
     const { key } = layoutDensityPlot(extremes["many models"] ?? {});
     expect(key.filter(({ label }) => label.startsWith("model")).length).toBe(12);
