@@ -29,7 +29,7 @@ export interface AxisRequest {
 }
 
 /** No axis carries more labels than this: beyond it they are noise. */
-export const maxTickLabels = 9;
+const maxTickLabels = 9;
 
 /** Labels the values; undefined when two labels would come closer than their room or there are too many. */
 export function labelledTicks(

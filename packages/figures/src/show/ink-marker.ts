@@ -30,7 +30,7 @@ export function markerInk(marker: PlotMarker): readonly SvgElement[] {
 }
 
 /** The shape of a marker alone. */
-export function shapeInk(shape: MarkerShape, [x, y]: Pixel, colour: string, filled: boolean): SvgElement {
+function shapeInk(shape: MarkerShape, [x, y]: Pixel, colour: string, filled: boolean): SvgElement {
   const look = { fill: filled ? colour : ink.paper, stroke: colour, "stroke-width": 1.4 };
   if (shape === "circle") return svgElement("circle", { cx: x, cy: y, r: markerRadius, ...look });
   const { corners, turn, size } = polygons[shape];

@@ -24,7 +24,7 @@ export interface PlotArea {
 }
 
 /** Pixels of a bar and half the width of its caps, 0 for none: on several series caps would hide the markers' shapes. */
-export interface MarkerBar {
+interface MarkerBar {
   readonly top: number;
   readonly bottom: number;
   readonly caps: number;
