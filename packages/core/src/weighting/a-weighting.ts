@@ -13,7 +13,7 @@ import type { Weighting } from "./weighting.js";
  * @example
  * ```ts
  * import { aWeighting } from "@quietband/core";
- * 10 * Math.log10(aWeighting().powerGainAt(100)); // → -19.145
+ * 10 * Math.log10(aWeighting().powerGainAt(100)); // → -19.1428
  * ```
  */
 export function aWeighting(): Weighting {

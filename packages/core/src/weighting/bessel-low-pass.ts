@@ -1,7 +1,19 @@
 import { requirePositive, requireWhole } from "../ground/domain.js";
+import { completeOptions } from "../ground/options.js";
 import { besselPoles } from "./bessel-poles.js";
+import { atScale, squaredSize } from "./conjugates.js";
 import { inName, makeWeighting } from "./make-weighting.js";
 import type { Weighting } from "./weighting.js";
+
+/** What {@link besselLowPass} takes. */
+export interface BesselLowPassOptions {
+  /** Number of poles n, 1 to 10. */
+  readonly order: number;
+  /** Half-power frequency, Hz; positive. */
+  readonly cutoffHz: number;
+}
+
+const needed: BesselLowPassOptions = Object.freeze({ order: Number.NaN, cutoffHz: Number.NaN });
 
 /**
  * Bessel (Thomson) low-pass: the reverse Bessel polynomial, scaled so that |H(cutoffHz)|² = 1/2 exactly and |H(0)|² = 1.
@@ -9,7 +21,6 @@ import type { Weighting } from "./weighting.js";
  * 1/|H|² = Σ_k c_k·(w f/cutoffHz)^(2k) with positive c_k = 4^k (2n−k)! (2n−2k)! (n!)² / (k! ((n−k)!)² ((2n)!)²), so
  * nothing cancels in the stop band. Tables also normalise it by delay or by asymptote; this one is by half power.
  *
- * @param options - `order` 1 to 10, `cutoffHz`, the half-power frequency.
  * @throws OutOfDomainError for an order out of range or a cutoff that is not positive and finite.
  * @see W. E. Thomson, Proc. IEE 96 (1949) 487; the magnitude series: A. Papoulis, The Fourier Integral, 1962.
  *
@@ -19,27 +30,23 @@ import type { Weighting } from "./weighting.js";
  * noiseBandwidth(besselLowPass({ order: 2, cutoffHz: 1 })).hz; // → 1.153594
  * ```
  */
-export function besselLowPass({ order, cutoffHz }: { readonly order: number; readonly cutoffHz: number }): Weighting {
+export function besselLowPass(options: BesselLowPassOptions): Weighting {
+  const { order, cutoffHz } = completeOptions("besselLowPass", needed, options);
   requireWhole("order", order, 1, 10);
   requirePositive("cutoffHz", cutoffHz, "Hz");
   const lossTerms = halfPowerTerms(order);
-  const poles = besselPoles(order).map(({ re, im }) => ({ re: re * cutoffHz, im: im * cutoffHz }));
+  const poles = atScale(cutoffHz, besselPoles(order));
   return makeWeighting({
     name: `Bessel low-pass, order ${order}, ${inName(cutoffHz)} Hz`,
     knots: [cutoffHz],
     lowExponent: 0,
     highExponent: 2 * order,
-    rational: {
-      gain: poles.reduce((product, { re, im }) => product * (re * re + im * im), 1),
-      zerosAtOrigin: 0,
-      zeros: [],
-      poles,
-    },
+    rational: { gain: squaredSize(poles), zerosAtOrigin: 0, zeros: [], poles },
     powerGainAt(hz: number): number {
       const u = hz / cutoffHz;
       const square = u * u;
-      let loss = 0;
-      for (let k = order; k >= 0; k -= 1) loss = loss * square + (lossTerms[k] as number);
+      let loss = lossTerms[order] as number;
+      for (let k = order - 1; k >= 0; k -= 1) loss = loss * square + (lossTerms[k] as number);
       return 1 / loss;
     },
   });

@@ -1,3 +1,4 @@
+import { withConjugates } from "./conjugates.js";
 import type { ComplexHz } from "./weighting.js";
 
 /**
@@ -56,12 +57,5 @@ const upperPoles: readonly (readonly (readonly [number, number])[])[] = Object.f
 
 /** All poles of one order, conjugates included. */
 export function besselPoles(order: number): ComplexHz[] {
-  return (upperPoles[order - 1] ?? []).flatMap(([re, im]) =>
-    im === 0
-      ? [{ re, im }]
-      : [
-          { re, im },
-          { re, im: -im },
-        ],
-  );
+  return withConjugates((upperPoles[order - 1] ?? []).map(([re, im]) => ({ re, im })));
 }

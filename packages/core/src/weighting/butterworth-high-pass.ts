@@ -1,14 +1,26 @@
 import { requirePositive, requireWhole } from "../ground/domain.js";
+import { completeOptions } from "../ground/options.js";
 import { wholePower } from "../numerics/whole-power.js";
 import { butterworthPoles } from "./butterworth-poles.js";
+import { atScale } from "./conjugates.js";
 import { inName, makeWeighting } from "./make-weighting.js";
 import type { Weighting } from "./weighting.js";
 
+/** What {@link butterworthHighPass} takes. */
+export interface ButterworthHighPassOptions {
+  /** Number of poles n, 1 to 12. */
+  readonly order: number;
+  /** Half-power frequency, Hz; positive. */
+  readonly cutoffHz: number;
+}
+
+const needed: ButterworthHighPassOptions = Object.freeze({ order: Number.NaN, cutoffHz: Number.NaN });
+
 /**
- * Butterworth high-pass: |H|² = 1/(1 + (cutoffHz/f)^(2n)).
+ * Butterworth high-pass, maximally flat: |H|² = 1/(1 + (cutoffHz/f)^(2n)).
  *
- * @param options - `order` n, 1 to 12; `cutoffHz`, the half-power frequency.
  * @throws OutOfDomainError for an order out of range or a cutoff that is not positive and finite.
+ * @see S. Butterworth, Experimental Wireless 7 (1930) 536.
  *
  * @example
  * ```ts
@@ -16,13 +28,8 @@ import type { Weighting } from "./weighting.js";
  * butterworthHighPass({ order: 2, cutoffHz: 10 }).powerGainAt(20); // → 0.941176
  * ```
  */
-export function butterworthHighPass({
-  order,
-  cutoffHz,
-}: {
-  readonly order: number;
-  readonly cutoffHz: number;
-}): Weighting {
+export function butterworthHighPass(options: ButterworthHighPassOptions): Weighting {
+  const { order, cutoffHz } = completeOptions("butterworthHighPass", needed, options);
   requireWhole("order", order, 1, 12);
   requirePositive("cutoffHz", cutoffHz, "Hz");
   return makeWeighting({
@@ -35,10 +42,10 @@ export function butterworthHighPass({
       gain: 1,
       zerosAtOrigin: order,
       zeros: [],
-      poles: butterworthPoles(order).map(({ re, im }) => ({ re: re * cutoffHz, im: im * cutoffHz })),
+      poles: atScale(cutoffHz, butterworthPoles(order)),
     },
     powerGainAt(hz: number): number {
-      return hz === 0 ? 0 : 1 / (1 + wholePower(cutoffHz / hz, 2 * order));
+      return 1 / (1 + wholePower(cutoffHz / hz, 2 * order));
     },
   });
 }

@@ -1,14 +1,26 @@
 import { requirePositive, requireWhole } from "../ground/domain.js";
+import { completeOptions } from "../ground/options.js";
 import { wholePower } from "../numerics/whole-power.js";
 import { butterworthPoles } from "./butterworth-poles.js";
+import { atScale } from "./conjugates.js";
 import { inName, makeWeighting } from "./make-weighting.js";
 import type { Weighting } from "./weighting.js";
 
+/** What {@link butterworthLowPass} takes. */
+export interface ButterworthLowPassOptions {
+  /** Number of poles n, 1 to 12. */
+  readonly order: number;
+  /** Half-power frequency, Hz; positive. */
+  readonly cutoffHz: number;
+}
+
+const needed: ButterworthLowPassOptions = Object.freeze({ order: Number.NaN, cutoffHz: Number.NaN });
+
 /**
- * Butterworth low-pass, maximally flat: |H|² = 1/(1 + (f/cutoffHz)^(2n)) (Butterworth 1930).
+ * Butterworth low-pass, maximally flat: |H|² = 1/(1 + (f/cutoffHz)^(2n)).
  *
- * @param options - `order` n, 1 to 12; `cutoffHz`, the half-power frequency.
  * @throws OutOfDomainError for an order out of range or a cutoff that is not positive and finite.
+ * @see S. Butterworth, Experimental Wireless 7 (1930) 536.
  *
  * @example
  * ```ts
@@ -16,13 +28,8 @@ import type { Weighting } from "./weighting.js";
  * noiseBandwidth(butterworthLowPass({ order: 4, cutoffHz: 100 })).hz; // → 102.617
  * ```
  */
-export function butterworthLowPass({
-  order,
-  cutoffHz,
-}: {
-  readonly order: number;
-  readonly cutoffHz: number;
-}): Weighting {
+export function butterworthLowPass(options: ButterworthLowPassOptions): Weighting {
+  const { order, cutoffHz } = completeOptions("butterworthLowPass", needed, options);
   requireWhole("order", order, 1, 12);
   requirePositive("cutoffHz", cutoffHz, "Hz");
   return makeWeighting({
@@ -35,7 +42,7 @@ export function butterworthLowPass({
       gain: cutoffHz ** (2 * order),
       zerosAtOrigin: 0,
       zeros: [],
-      poles: butterworthPoles(order).map(({ re, im }) => ({ re: re * cutoffHz, im: im * cutoffHz })),
+      poles: atScale(cutoffHz, butterworthPoles(order)),
     },
     powerGainAt(hz: number): number {
       return 1 / (1 + wholePower(hz / cutoffHz, 2 * order));

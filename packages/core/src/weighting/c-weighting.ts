@@ -10,7 +10,7 @@ import type { Weighting } from "./weighting.js";
  * @example
  * ```ts
  * import { cWeighting } from "@quietband/core";
- * 10 * Math.log10(cWeighting().powerGainAt(10000)); // → -4.4206
+ * 10 * Math.log10(cWeighting().powerGainAt(10000)); // → -4.4055
  * ```
  */
 export function cWeighting(): Weighting {

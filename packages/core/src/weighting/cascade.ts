@@ -68,18 +68,21 @@ function collected(one: RationalGain | undefined, other: RationalGain | undefine
   };
 }
 
-/** A lobed gain times a smooth one has the smooth one in its envelopes; two lobed gains multiply wave by wave. */
+/** Smooth filters join the smooth factor of a lobed gain; two lobed gains multiply wave by wave. */
 function lobesOf(one: Weighting, other: Weighting): LobedGain | undefined {
-  if (one.lobes === undefined && other.lobes === undefined) return undefined;
-  if (one.lobes === undefined) return lobesOf(other, one);
-  const smooth = [{ envelopeAt: (hz: number) => other.powerGainAt(hz), waves: [{ seconds: 0, cosine: 1, sine: 0 }] }];
-  const factor = other.lobes?.parts ?? smooth;
-  const waves = (parts: LobedGain["parts"]): number => parts.reduce((sum, part) => sum + part.waves.length, 0);
-  if (waves(one.lobes.parts) * waves(factor) > mostWaves) return undefined;
+  const [a, b] = [one.lobes, other.lobes];
+  if (a === undefined && b === undefined) return undefined;
+  if (a === undefined) return lobesOf(other, one);
+  if (b === undefined) return { ...a, smoothAt: (hz: number) => a.smoothAt(hz) * other.powerGainAt(hz) };
+  const count = (parts: LobedGain["parts"]): number => parts.reduce((sum, part) => sum + part.waves.length, 0);
+  if (count(a.parts) * count(b.parts) > mostWaves) return undefined;
   return {
-    lobeHz: Math.min(one.lobes.lobeHz, other.lobes?.lobeHz ?? Number.POSITIVE_INFINITY),
-    peaksEveryHz: [...new Set([...one.lobes.peaksEveryHz, ...(other.lobes?.peaksEveryHz ?? [])])],
-    parts: multiplyParts(one.lobes.parts, factor),
+    lobeHz: Math.min(a.lobeHz, b.lobeHz),
+    parts: multiplyParts(a.parts, b.parts),
+    peaksEveryHz: [...new Set([...a.peaksEveryHz, ...b.peaksEveryHz])],
+    ...(a.repeatsHz !== undefined && a.repeatsHz === b.repeatsHz && { repeatsHz: a.repeatsHz }),
+    coreAt: (hz: number) => a.coreAt(hz) * b.coreAt(hz),
+    smoothAt: (hz: number) => a.smoothAt(hz) * b.smoothAt(hz),
   };
 }
 

@@ -1,7 +1,7 @@
 import { requirePositive } from "../ground/domain.js";
 import { autocorrelation } from "./autocorrelation.js";
 import { requireCoefficients } from "./coefficients.js";
-import { inName, makeWeighting } from "./make-weighting.js";
+import { inName, makeLobed } from "./make-weighting.js";
 import { tapGain } from "./tap-gain.js";
 import { turnsAtRate } from "./turns-at-rate.js";
 import { steady, wave } from "./waves.js";
@@ -27,7 +27,7 @@ export function firFilter(options: { readonly taps: readonly number[]; readonly 
   const lags = autocorrelation(taps);
   const waves = lags.map((value, lag) => (lag === 0 ? steady(value) : wave(lag / rate, 2 * value)));
   const lobeHz = rate / Math.max(taps.length, 2);
-  return makeWeighting({
+  return makeLobed({
     name: `FIR filter, ${taps.length} taps, ${inName(rate)} Hz`,
     knots: [0.5 * lobeHz, lobeHz],
     lowExponent: -2 * gain.zerosAtDc,

@@ -1,11 +1,19 @@
 import { requirePositive } from "../ground/domain.js";
+import { completeOptions } from "../ground/options.js";
 import { inName, makeWeighting } from "./make-weighting.js";
 import type { Weighting } from "./weighting.js";
+
+/** What {@link firstOrderHighPass} takes. */
+export interface FirstOrderHighPassOptions {
+  /** Half-power frequency, which is the pole; Hz, positive. */
+  readonly cutoffHz: number;
+}
+
+const needed: FirstOrderHighPassOptions = Object.freeze({ cutoffHz: Number.NaN });
 
 /**
  * One pole and a zero at 0 Hz: |H|² = f²/(f² + cutoffHz²).
  *
- * @param options - `cutoffHz`, the half-power frequency, positive.
  * @throws OutOfDomainError for a cutoff that is not positive and finite.
  *
  * @example
@@ -14,7 +22,8 @@ import type { Weighting } from "./weighting.js";
  * firstOrderHighPass({ cutoffHz: 0.1 }).powerGainAt(0.3); // → 0.9000
  * ```
  */
-export function firstOrderHighPass({ cutoffHz }: { readonly cutoffHz: number }): Weighting {
+export function firstOrderHighPass(options: FirstOrderHighPassOptions): Weighting {
+  const { cutoffHz } = completeOptions("firstOrderHighPass", needed, options);
   requirePositive("cutoffHz", cutoffHz, "Hz");
   return makeWeighting({
     name: `first-order high-pass, ${inName(cutoffHz)} Hz`,
@@ -24,7 +33,6 @@ export function firstOrderHighPass({ cutoffHz }: { readonly cutoffHz: number }):
     saturating: { cutoffHz, order: 1, numeratorOrder: 1 },
     rational: { gain: 1, zerosAtOrigin: 1, zeros: [], poles: [{ re: -cutoffHz, im: 0 }] },
     powerGainAt(hz: number): number {
-      if (hz === 0) return 0;
       const v = cutoffHz / hz;
       return 1 / (1 + v * v);
     },

@@ -1,12 +1,21 @@
 import { requirePositive } from "../ground/domain.js";
+import { completeOptions } from "../ground/options.js";
 import { inName, makeWeighting } from "./make-weighting.js";
 import type { Weighting } from "./weighting.js";
+
+/** What {@link firstOrderLowPass} takes. */
+export interface FirstOrderLowPassOptions {
+  /** Half-power frequency, which is the pole; Hz, positive. */
+  readonly cutoffHz: number;
+}
+
+const needed: FirstOrderLowPassOptions = Object.freeze({ cutoffHz: Number.NaN });
 
 /**
  * One pole: |H|² = 1/(1 + (f/cutoffHz)²).
  *
- * @param options - `cutoffHz`, the half-power frequency, positive.
  * @throws OutOfDomainError for a cutoff that is not positive and finite.
+ * @see B. M. Oliver, J. M. Cage, Electronic Measurements and Instrumentation, 1971: its noise bandwidth is (π/2)·cutoffHz.
  *
  * @example
  * ```ts
@@ -14,7 +23,8 @@ import type { Weighting } from "./weighting.js";
  * noiseBandwidth(firstOrderLowPass({ cutoffHz: 1000 })).hz; // → 1570.8
  * ```
  */
-export function firstOrderLowPass({ cutoffHz }: { readonly cutoffHz: number }): Weighting {
+export function firstOrderLowPass(options: FirstOrderLowPassOptions): Weighting {
+  const { cutoffHz } = completeOptions("firstOrderLowPass", needed, options);
   requirePositive("cutoffHz", cutoffHz, "Hz");
   return makeWeighting({
     name: `first-order low-pass, ${inName(cutoffHz)} Hz`,

@@ -1,13 +1,22 @@
 import { requirePositive } from "../ground/domain.js";
-import { sincSquared, turnsOf } from "../numerics/turns.js";
-import { inName, makeWeighting } from "./make-weighting.js";
+import { completeOptions } from "../ground/options.js";
+import { sincSquared } from "../numerics/sinc-squared.js";
+import { turnsOf } from "../numerics/turns.js";
+import { inName, makeLobed } from "./make-weighting.js";
 import { steady, wave } from "./waves.js";
 import type { Weighting } from "./weighting.js";
+
+/** What {@link movingAverage} takes. */
+export interface MovingAverageOptions {
+  /** Length of the average T, s; positive. */
+  readonly seconds: number;
+}
+
+const needed: MovingAverageOptions = Object.freeze({ seconds: Number.NaN });
 
 /**
  * Moving average over T: |H|² = (sin(πfT)/(πfT))².
  *
- * @param options - `seconds`, the length of the average T.
  * @throws OutOfDomainError for a length that is not positive and finite.
  *
  * @example
@@ -16,9 +25,10 @@ import type { Weighting } from "./weighting.js";
  * noiseBandwidth(movingAverage({ seconds: 0.02 })).hz; // → 25.000
  * ```
  */
-export function movingAverage({ seconds }: { readonly seconds: number }): Weighting {
+export function movingAverage(options: MovingAverageOptions): Weighting {
+  const { seconds } = completeOptions("movingAverage", needed, options);
   requirePositive("seconds", seconds, "s");
-  return makeWeighting({
+  return makeLobed({
     name: `moving average, ${inName(seconds)} s`,
     knots: [1 / seconds],
     lowExponent: 0,

@@ -19,7 +19,7 @@ const pairs: readonly (readonly [number, number])[] = Object.freeze([
  * @example
  * ```ts
  * import { programmeWeighting } from "@quietband/core";
- * 10 * Math.log10(programmeWeighting().powerGainAt(6300)); // → 12.18
+ * 10 * Math.log10(programmeWeighting().powerGainAt(6300)); // → 12.217
  * ```
  */
 export function programmeWeighting(): Weighting {

@@ -1,8 +1,18 @@
 import { requirePositive } from "../ground/domain.js";
-import { sincSquared, turnsOf } from "../numerics/turns.js";
-import { inName, makeWeighting } from "./make-weighting.js";
+import { completeOptions } from "../ground/options.js";
+import { sincSquared } from "../numerics/sinc-squared.js";
+import { turnsOf } from "../numerics/turns.js";
+import { inName, makeLobed } from "./make-weighting.js";
 import { steady, wave } from "./waves.js";
 import type { Weighting } from "./weighting.js";
+
+/** What {@link recordMeanRemoved} takes. */
+export interface RecordMeanRemovedOptions {
+  /** Length of the record T, s; positive. */
+  readonly seconds: number;
+}
+
+const needed: RecordMeanRemovedOptions = Object.freeze({ seconds: Number.NaN });
 
 /**
  * What a dc-coupled record of T seconds shows once its own mean is gone: |H|² = 1 − (sin(πfT)/(πfT))².
@@ -10,7 +20,6 @@ import type { Weighting } from "./weighting.js";
  * Its variance is the mean over the record of (v − mean)². It converges from 0 Hz for exponents below 3 and equals, for pure
  * 1/f noise, a lower band edge of e^(3/2 − γ)/(2πT) = 0.400/T, not 1/T.
  *
- * @param options - `seconds`, the length of the record T.
  * @throws OutOfDomainError for a length that is not positive and finite.
  *
  * @example
@@ -22,9 +31,10 @@ import type { Weighting } from "./weighting.js";
  * bandNoise(flicker, { fromHz: 0.0400, toHz: 100 }).rms; // → 2.797e-6
  * ```
  */
-export function recordMeanRemoved({ seconds }: { readonly seconds: number }): Weighting {
+export function recordMeanRemoved(options: RecordMeanRemovedOptions): Weighting {
+  const { seconds } = completeOptions("recordMeanRemoved", needed, options);
   requirePositive("seconds", seconds, "s");
-  return makeWeighting({
+  return makeLobed({
     name: `mean removed over ${inName(seconds)} s`,
     knots: [0.5 / seconds, 1 / seconds],
     lowExponent: -2,
@@ -39,17 +49,17 @@ export function recordMeanRemoved({ seconds }: { readonly seconds: number }): We
     },
     powerGainAt(hz: number): number {
       const turns = hz * seconds;
-      return turns < 0.3 ? lossOfMean(Math.PI * turns) : 1 - sincSquared(turns, turnsOf(hz, seconds));
+      return turns < 0.5 ? lossOfMean(Math.PI * turns) : 1 - sincSquared(turns, turnsOf(hz, seconds));
     },
   });
 }
 
-/** 1 − (sin x/x)² = Σ_{k≥1} (−1)^(k+1) 2^(2k+1) x^(2k)/(2k + 2)!, for |x| < 1. */
+/** 1 − (sin x/x)² = Σ_{k≥1} (−1)^(k+1) 2^(2k+1) x^(2k)/(2k + 2)!, for x below π/2, where its terms lose a factor of two. */
 function lossOfMean(x: number): number {
   const square = 4 * x * x;
   let term = square / 12;
   let sum = term;
-  for (let k = 2; k < 16 && Math.abs(term) > 1e-18 * sum; k += 1) {
+  for (let k = 2; k < 20 && Math.abs(term) > 1e-18 * sum; k += 1) {
     term *= -square / ((2 * k + 1) * (2 * k + 2));
     sum += term;
   }

@@ -1,14 +1,24 @@
 import { requirePositive } from "../ground/domain.js";
-import { inName, makeWeighting } from "./make-weighting.js";
+import { completeOptions } from "../ground/options.js";
+import { inName, makeLobed } from "./make-weighting.js";
 import { steady, wave } from "./waves.js";
 import type { Weighting } from "./weighting.js";
 
+/** What {@link recordTrendRemoved} takes. */
+export interface RecordTrendRemovedOptions {
+  /** Length of the record T, s; positive. */
+  readonly seconds: number;
+}
+
+const needed: RecordTrendRemovedOptions = Object.freeze({ seconds: Number.NaN });
+
 /**
  * What a dc-coupled record of T seconds shows once its mean and its straight-line trend are gone:
- * |H|² = 1 − j₀(x)² − 3 j₁(x)², x = πfT, j_n the spherical Bessel functions: a wave seen over a record is Σ (2n + 1) iⁿ j_n(x)
- * P_n, and the first two Legendre polynomials are taken out. Converges from 0 Hz for exponents below 5.
+ * |H|² = 1 − j₀(x)² − 3 j₁(x)², x = πfT, j_n the spherical Bessel functions.
  *
- * @param options - `seconds`, the length of the record T.
+ * A wave seen over a record is Σ (2n + 1) iⁿ j_n(x) P_n of the place in it (DLMF 10.60.7); the first two Legendre polynomials
+ * are taken out. Converges from 0 Hz for exponents below 5.
+ *
  * @throws OutOfDomainError for a length that is not positive and finite.
  *
  * @example
@@ -17,10 +27,11 @@ import type { Weighting } from "./weighting.js";
  * recordTrendRemoved({ seconds: 1 }).powerGainAt(100); // → 0.99997
  * ```
  */
-export function recordTrendRemoved({ seconds }: { readonly seconds: number }): Weighting {
+export function recordTrendRemoved(options: RecordTrendRemovedOptions): Weighting {
+  const { seconds } = completeOptions("recordTrendRemoved", needed, options);
   requirePositive("seconds", seconds, "s");
   const inverse = (hz: number): number => 1 / (Math.PI * hz * seconds);
-  return makeWeighting({
+  return makeLobed({
     name: `mean and trend removed over ${inName(seconds)} s`,
     knots: [0.5 / seconds, 1 / seconds],
     lowExponent: -4,
@@ -38,23 +49,26 @@ export function recordTrendRemoved({ seconds }: { readonly seconds: number }): W
     },
     powerGainAt(hz: number): number {
       const x = Math.PI * hz * seconds;
-      if (x < 2) return lossOfTrend(x);
-      const [sine, cosine] = [Math.sin(x), Math.cos(x)];
-      const j0 = sine / x;
-      const j1 = (j0 - cosine) / x;
-      return 1 - j0 * j0 - 3 * j1 * j1;
+      return x < 3 ? lossOfTrend(x) : 1 - shareOfTrend(x);
     },
   });
 }
 
-/** Σ_{n≥2} (2n + 1) j_n(x)², what is left, all terms positive; j_n by its power series. */
+/** j₀² + 3 j₁², what mean and trend hold. */
+function shareOfTrend(x: number): number {
+  if (x > 1e9) return 0;
+  const j0 = Math.sin(x) / x;
+  const j1 = (j0 - Math.cos(x)) / x;
+  return j0 * j0 + 3 * j1 * j1;
+}
+
+/** Σ_{n≥2} (2n + 1) j_n(x)², what they leave, all terms positive; j_n by its power series (DLMF 10.53.1). */
 function lossOfTrend(x: number): number {
   const square = 0.5 * x * x;
-  let lead = 1;
+  let lead = x / 3;
   let sum = 0;
-  for (let n = 1; n < 20; n += 1) {
+  for (let n = 2; n < 24; n += 1) {
     lead *= x / (2 * n + 1);
-    if (n < 2) continue;
     let term = 1;
     let series = 1;
     for (let k = 1; k < 30 && Math.abs(term) > 1e-18; k += 1) {

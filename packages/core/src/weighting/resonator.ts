@@ -1,12 +1,22 @@
 import { requirePositive } from "../ground/domain.js";
+import { completeOptions } from "../ground/options.js";
 import { inName, makeWeighting } from "./make-weighting.js";
-import { resonanceKnots, resonancePoles, resonanceTerms } from "./resonance.js";
+import { detuning, resonanceKnots, resonancePoles } from "./resonance.js";
 import type { Weighting } from "./weighting.js";
 
+/** What {@link resonator} takes. */
+export interface ResonatorOptions {
+  /** Where the gain is 1, Hz; positive. */
+  readonly centreHz: number;
+  /** Quality factor, positive: centreHz over the half-power width. */
+  readonly q: number;
+}
+
+const needed: ResonatorOptions = Object.freeze({ centreHz: Number.NaN, q: Number.NaN });
+
 /**
- * Resonator (second-order band-pass) with peak gain 1: |H|² = (u/q)²/((1 − u²)² + (u/q)²), u = f/centreHz.
+ * Resonator (second-order band-pass) with peak gain 1: |H|² = 1/(1 + (q·(1 − u²)/u)²), u = f/centreHz.
  *
- * @param options - `centreHz`, where the gain is 1; `q`, the quality factor: half-power width centreHz/q.
  * @throws OutOfDomainError for a frequency or q that is not positive and finite.
  *
  * @example
@@ -15,7 +25,8 @@ import type { Weighting } from "./weighting.js";
  * noiseBandwidth(resonator({ centreHz: 1000, q: 50 })).hz; // → 31.4159
  * ```
  */
-export function resonator({ centreHz, q }: { readonly centreHz: number; readonly q: number }): Weighting {
+export function resonator(options: ResonatorOptions): Weighting {
+  const { centreHz, q } = completeOptions("resonator", needed, options);
   requirePositive("centreHz", centreHz, "Hz");
   requirePositive("q", q);
   return makeWeighting({
@@ -25,8 +36,8 @@ export function resonator({ centreHz, q }: { readonly centreHz: number; readonly
     highExponent: 2,
     rational: { gain: (centreHz / q) ** 2, zerosAtOrigin: 1, zeros: [], poles: resonancePoles(centreHz, q) },
     powerGainAt(hz: number): number {
-      const { detuning, damping } = resonanceTerms(hz, centreHz, q);
-      return damping === 0 ? 0 : damping / (detuning + damping);
+      const off = (q * detuning(hz, centreHz)) / (hz / centreHz);
+      return 1 / (1 + off * off);
     },
   });
 }

@@ -1,12 +1,22 @@
 import { requirePositive } from "../ground/domain.js";
+import { completeOptions } from "../ground/options.js";
 import { inName, makeWeighting } from "./make-weighting.js";
-import { resonanceKnots, resonancePoles, resonanceTerms } from "./resonance.js";
+import { detuning, resonanceKnots, resonancePoles } from "./resonance.js";
 import type { Weighting } from "./weighting.js";
 
+/** What {@link secondOrderLowPass} takes. */
+export interface SecondOrderLowPassOptions {
+  /** Natural frequency f₀, Hz; positive. */
+  readonly naturalHz: number;
+  /** Quality factor, positive; 1/√2 is Butterworth, 1/2 two equal poles. */
+  readonly q: number;
+}
+
+const needed: SecondOrderLowPassOptions = Object.freeze({ naturalHz: Number.NaN, q: Number.NaN });
+
 /**
- * Second-order low-pass by quality factor: |H|² = 1/((1 − u²)² + (u/q)²), u = f/naturalHz.
+ * Second-order low-pass by quality factor: |H|² = 1/((1 − u²)² + (u/q)²), u = f/naturalHz; q² at the natural frequency.
  *
- * @param options - `naturalHz`, the natural frequency; `q`, the quality factor (1/√2 is Butterworth).
  * @throws OutOfDomainError for a frequency or q that is not positive and finite.
  *
  * @example
@@ -15,7 +25,8 @@ import type { Weighting } from "./weighting.js";
  * noiseBandwidth(secondOrderLowPass({ naturalHz: 100, q: 5 })).hz; // → 785.398
  * ```
  */
-export function secondOrderLowPass({ naturalHz, q }: { readonly naturalHz: number; readonly q: number }): Weighting {
+export function secondOrderLowPass(options: SecondOrderLowPassOptions): Weighting {
+  const { naturalHz, q } = completeOptions("secondOrderLowPass", needed, options);
   requirePositive("naturalHz", naturalHz, "Hz");
   requirePositive("q", q);
   return makeWeighting({
@@ -25,8 +36,9 @@ export function secondOrderLowPass({ naturalHz, q }: { readonly naturalHz: numbe
     highExponent: 4,
     rational: { gain: naturalHz ** 4, zerosAtOrigin: 0, zeros: [], poles: resonancePoles(naturalHz, q) },
     powerGainAt(hz: number): number {
-      const { detuning, damping } = resonanceTerms(hz, naturalHz, q);
-      return 1 / (detuning + damping);
+      const off = detuning(hz, naturalHz);
+      const loss = hz / naturalHz / q;
+      return 1 / (off * off + loss * loss);
     },
   });
 }

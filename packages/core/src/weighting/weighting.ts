@@ -51,17 +51,23 @@ export interface SaturatingGain {
 }
 
 /**
- * |H(f)|² = Σ over parts of envelopeAt(f) · Σ_j (cosine_j · cos(2π f seconds_j) + sine_j · sin(2π f seconds_j)): smooth
- * envelopes times slow or fast waves. A moving average over T is one part, envelope (πfT)⁻² and waves ½ − ½ cos(2πfT). The
- * form is closed under products, so a cascade of lobed gains is one. Integrators use it where a panel holds many lobes;
- * where it holds few, or near 0 Hz, they take `powerGainAt`, which does not cancel.
+ * |H(f)|² = smoothAt(f) · Σ over parts of envelopeAt(f) · Σ_j (cosine_j cos(2π f seconds_j) + sine_j sin(2π f seconds_j)). A
+ * moving average over T is one part, envelope (πfT)⁻² and waves ½ − ½ cos(2πfT). The form is closed under products, so a
+ * cascade of lobed gains is one. Integrators use it where a panel holds many lobes; where it holds few, or near 0 Hz, they
+ * take the gain itself, which does not cancel.
  */
 export interface LobedGain {
   /** Hz, the distance between neighbouring zeros or dips: the width that a panel must resolve or count. */
   readonly lobeHz: number;
   readonly parts: readonly LobedPart[];
-  /** Hz: the envelopes peak at multiples of each of these (the rates of digital filters), and bend there. */
+  /** Hz: envelopes peak at multiples of each of these (the rates of digital filters). */
   readonly peaksEveryHz: readonly number[];
+  /** Hz after which the lobed factor repeats exactly: the rate of a digital filter. */
+  readonly repeatsHz?: number;
+  /** The lobed factor alone, without the smooth one. */
+  coreAt(hz: number): number;
+  /** The smooth filters of a cascade; 1 where there are none. */
+  smoothAt(hz: number): number;
 }
 
 /** One part of a {@link LobedGain}. */
