@@ -103,7 +103,9 @@ function crossing(
     if (atA === 0) return a;
     if (atA > 0 !== atB > 0) {
       const root = bracketedRoot((x) => excess(a * Math.exp(x)), [0, Math.log(b / a)], 1e-15);
-      return root === undefined ? undefined : a * Math.exp(root.x);
+      // rounding at an end of the decade can take the sign change away: then the end itself is the place
+      if (root === undefined) return Math.abs(atA) < Math.abs(atB) ? a : b;
+      return a * Math.exp(root.x);
     }
     a = b;
     atA = atB;

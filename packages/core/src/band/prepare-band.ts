@@ -8,6 +8,7 @@ import { bandNoiseTolerance, requireReached } from "./band-noise.js";
 import { bandPower } from "./band-power.js";
 import { requireConvergent } from "./convergence.js";
 import { type FoldedPanels, foldIntoPanels, panelCountFor, panelExponentLimit } from "./folded-panels.js";
+import { meanGainAt } from "./lobed-factor.js";
 
 /** One weighting over one band, prepared for many spectra. */
 export interface PreparedBand {
@@ -107,8 +108,10 @@ function endPower({ at, level, exponent }: PowerLawTerm, end: OpenEnd, from: num
 }
 
 function endOf(weighting: Weighting | undefined, edge: number, side: "low" | "high"): OpenEnd {
-  const exponent = (side === "low" ? weighting?.lowExponent : weighting?.highExponent) ?? 0;
-  return { edge, gain: weighting?.powerGainAt(edge) ?? 1, exponent };
+  if (weighting === undefined) return { edge, gain: 1, exponent: 0 };
+  if (side === "low") return { edge, gain: weighting.powerGainAt(edge), exponent: weighting.lowExponent };
+  const gain = weighting.lobes === undefined ? weighting.powerGainAt(edge) : meanGainAt(weighting.lobes, edge);
+  return { edge, gain, exponent: weighting.highExponent };
 }
 
 /** Where an open band is cut: so far beyond the outermost knot that the gain is its end's power law to an ulp. */
