@@ -7,6 +7,7 @@ export { type PreparedBand, prepareBand } from "./band/prepare-band.js";
 export { type RunningNoise, type RunningNoiseOptions, runningNoise } from "./band/running-noise.js";
 export { type SpectralMoment, spectralMoment } from "./band/spectral-moment.js";
 export type { UncertaintyPart } from "./band/uncertainty.js";
+export { assumedPointUncertainty } from "./curve/assumed-point-uncertainty.js";
 export {
   type AxesCalibration,
   type AxesDescription,
@@ -19,7 +20,7 @@ export type { CommonEffect, Curve, CurvePoint, CurveSourceEntry } from "./curve/
 export { type CurveOptions, curveFromPoints, type GivenPoint } from "./curve/curve-from-points.js";
 export { type PathOptions, pointsFromPath } from "./curve/points-from-path.js";
 export { type PicksOptions, pointsFromPicks } from "./curve/points-from-picks.js";
-export { readCurve } from "./curve/read-curve.js";
+export { type ReadCurveOptions, readCurve } from "./curve/read-curve.js";
 export { thinCurve } from "./curve/thin-curve.js";
 export { writeCurve } from "./curve/write-curve.js";
 export {
@@ -30,8 +31,8 @@ export {
   type NoiseErrorCode,
   OutOfDomainError,
 } from "./ground/errors.js";
-export { type Quantity, type ReadQuantityOptions, readQuantity } from "./ground/quantity.js";
-export { readBand } from "./ground/read-band.js";
+export { type BandEdges, readBand } from "./ground/read-band.js";
+export { type Quantity, type ReadQuantityOptions, readQuantity } from "./ground/read-quantity.js";
 export { type WriteQuantityOptions, writeQuantity } from "./ground/write-quantity.js";
 export type { PowerLawPiece, PowerLawTerm } from "./numerics/power-law.js";
 export type { Beyond, BeyondSide } from "./spectrum/beyond.js";
@@ -52,10 +53,10 @@ export { type ButterworthLowPassOptions, butterworthLowPass } from "./weighting/
 export { cWeighting } from "./weighting/c-weighting.js";
 export { cascade } from "./weighting/cascade.js";
 export { type ChebyshevLowPassOptions, chebyshevLowPass } from "./weighting/chebyshev-low-pass.js";
-export { firFilter } from "./weighting/fir-filter.js";
+export { type FirFilterOptions, firFilter } from "./weighting/fir-filter.js";
 export { type FirstOrderHighPassOptions, firstOrderHighPass } from "./weighting/first-order-high-pass.js";
 export { type FirstOrderLowPassOptions, firstOrderLowPass } from "./weighting/first-order-low-pass.js";
-export { gain } from "./weighting/gain.js";
+export { type GainOptions, gain } from "./weighting/gain.js";
 export { type GainTableRow, gainTable } from "./weighting/gain-table.js";
 export { type IdenticalPolesOptions, identicalPoles } from "./weighting/identical-poles.js";
 export { type IirFilterOptions, iirFilter } from "./weighting/iir-filter.js";

@@ -1,42 +1,50 @@
+import { requireBetween } from "../ground/domain.js";
 import { OutOfDomainError } from "../ground/errors.js";
 import { refuseUnknownKeys } from "../ground/options.js";
+import { quoted } from "../ground/quoted.js";
+import { readUnit } from "../ground/unit.js";
+import { ascendingOrder } from "./ascending-order.js";
+import { assumedPointUncertainty, curveRange } from "./assumed-point-uncertainty.js";
 import type { Curve, CurvePoint, CurveSourceEntry } from "./curve.js";
-
-/** Relative standard uncertainty of a point that states none: what a careful eye reads off a plot. */
-export const assumedPointUncertainty = 0.05;
+import { isSettingKey, longestKey } from "./curve-comments.js";
+import { tidyText } from "./tidy-text.js";
 
 /** A point as given to {@link curveFromPoints}; SI units. */
 export interface GivenPoint {
-  /** Hz, positive. */
+  /** Hz, 1e-150 to 1e150. */
   readonly frequency: number;
-  /** unit/√Hz, positive. */
+  /** unit/√Hz, 1e-150 to 1e150. */
   readonly density: number;
-  /** Relative standard uncertainty of the density (k = 1), above 0 and at most 1. */
+  /** Relative standard uncertainty (k = 1) of the density, above 0 and at most 1. */
   readonly uncertainty?: number | undefined;
   /** False to keep the point for show and out of fits. */
   readonly inFit?: boolean | undefined;
-  readonly line?: number | undefined;
 }
 
 /** What {@link curveFromPoints} takes besides the points. */
 export interface CurveOptions {
-  /** Unit of the signal; "V" unless given. */
-  readonly unit?: string | undefined;
+  /** Unit of the signal, without prefix: "V" for densities in V/√Hz. */
+  readonly unit: string;
   readonly label?: string | undefined;
-  /** For points that state none; 5 % is assumed, and said to be, where this is missing too. */
+  /** For points that state none; where this is missing too, 5 % is assumed, and the curve says so. */
   readonly pointUncertainty?: number | undefined;
-  /** Relative standard uncertainty of an error all points share; 0 unless given. */
+  /** Relative standard uncertainty of an error common to all points, 0 to 1; 0 unless given. */
   readonly commonUncertainty?: number | undefined;
+  /** Where it comes from, in the order reports print it. */
   readonly source?: readonly CurveSourceEntry[] | undefined;
 }
 
 /**
  * A curve from points in any order: sorted, checked, frozen.
  *
+ * A point given twice alike counts once. Texts are kept on one line: white space in them becomes single blanks.
+ *
  * @param points - at least two, at different frequencies.
- * @param options - unit, label, uncertainty of points that state none, provenance.
- * @throws OutOfDomainError for fewer than two points, values that are not positive and finite, two densities at one
- *   frequency, or an uncertainty that is not above 0 and at most 1.
+ * @param options - unit, label, uncertainties, provenance.
+ * @returns the points in ascending frequency, with what is known of them.
+ * @throws OutOfDomainError for fewer than two points, values outside their range, two different points at one frequency, a unit
+ *   that is unknown or has a prefix, a source key that has a colon, is longer than 60 characters, or is one of the settings
+ *   that `readCurve` takes from comments (label, uncertainty, axis uncertainty).
  *
  * @example
  * ```ts
@@ -44,60 +52,76 @@ export interface CurveOptions {
  * const curve = curveFromPoints([{ frequency: 10, density: 9e-9 }, { frequency: 1, density: 21e-9 }], { unit: "V" });
  * curve.points[0]?.frequency; // → 1
  * curve.points[0]?.uncertainty; // → 0.05
+ * curve.uncertaintyIs; // → assumed
  * ```
  */
-export function curveFromPoints(points: readonly GivenPoint[], options: CurveOptions = {}): Curve {
+export function curveFromPoints(points: readonly GivenPoint[], options: CurveOptions): Curve {
   refuseUnknownKeys("curveFromPoints", ["unit", "label", "pointUncertainty", "commonUncertainty", "source"], options);
-  const { unit = "V", label = "", pointUncertainty, commonUncertainty = 0, source = [] } = options;
+  const { unit, label = "", pointUncertainty, commonUncertainty = 0, source = [] } = options;
+  requireUnit(unit);
+  requireBetween("commonUncertainty", commonUncertainty, [0, 1]);
   if (pointUncertainty !== undefined) requireUncertainty("pointUncertainty", pointUncertainty);
-  if (!(commonUncertainty >= 0 && commonUncertainty <= 1))
+  const made = points.map((point, index) => checkedPoint(point, index, pointUncertainty));
+  const order = ascendingOrder(made, (first, second) => {
     throw new OutOfDomainError(
-      `commonUncertainty must be at least 0 and at most 1, relative; got ${commonUncertainty}.`,
-    );
-  let assumed = false;
-  const made = points.map((point, index): CurvePoint => {
-    requireValue(index, "frequency", point.frequency, "Hz");
-    requireValue(index, "density", point.density, `${unit}/√Hz`);
-    const stated = point.uncertainty ?? pointUncertainty;
-    if (stated === undefined) assumed = true;
-    else requireUncertainty(`uncertainty of point ${index + 1}`, stated);
-    return Object.freeze({
-      frequency: point.frequency,
-      density: point.density,
-      uncertainty: stated ?? assumedPointUncertainty,
-      inFit: point.inFit ?? true,
-      ...(point.line !== undefined && { line: point.line }),
-    });
-  });
-  const sorted = made.toSorted((one, other) => one.frequency - other.frequency);
-  const distinct = sorted.filter((point, index) => {
-    const before = sorted[index - 1];
-    if (before === undefined || before.frequency !== point.frequency) return true;
-    if (before.density === point.density) return false;
-    throw new OutOfDomainError(
-      `A curve has one density at each frequency; at ${point.frequency} Hz it got ${before.density} and ${point.density} ${unit}/√Hz.`,
+      `A curve has one density at each frequency; at ${first.frequency} Hz it got ${said(first)} and ${said(second)}.`,
     );
   });
-  if (distinct.length < 2)
-    throw new OutOfDomainError(`A curve needs at least two points at different frequencies; got ${distinct.length}.`);
+  const sorted = order?.map((index) => made[index] as CurvePoint) ?? made;
+  if (sorted.length < 2)
+    throw new OutOfDomainError(`A curve needs at least two points at different frequencies; got ${sorted.length}.`);
+  const allGiven = pointUncertainty !== undefined || points.every(({ uncertainty }) => uncertainty !== undefined);
   return Object.freeze({
     unit,
-    label,
-    points: Object.freeze(distinct),
-    uncertaintyIs: assumed ? "assumed" : "given",
+    label: tidyText(label),
+    points: Object.freeze(sorted),
+    uncertaintyIs: allGiven ? "given" : "assumed",
     commonUncertainty,
-    source: Object.freeze(source.map(({ key, value }) => Object.freeze({ key, value }))),
+    source: Object.freeze(source.flatMap((entry) => tidyEntry(entry))),
   });
 }
 
-function requireValue(index: number, name: string, value: number, unit: string): void {
-  if (typeof value === "number" && value > 0 && value < Number.POSITIVE_INFINITY) return;
+function checkedPoint(point: GivenPoint, index: number, pointUncertainty: number | undefined): CurvePoint {
+  const { frequency, density, inFit = true } = point;
+  requireInRange(frequency, index, "frequency");
+  requireInRange(density, index, "density");
+  const uncertainty = point.uncertainty ?? pointUncertainty ?? assumedPointUncertainty;
+  requireUncertainty("the uncertainty of a point", uncertainty);
+  return Object.freeze({ frequency, density, uncertainty, inFit });
+}
+
+function requireInRange(value: number, index: number, name: "frequency" | "density"): void {
+  if (value >= curveRange[0] && value <= curveRange[1]) return;
+  const unit = name === "frequency" ? "Hz" : "the unit/√Hz";
   throw new OutOfDomainError(
-    `The ${name} of point ${index + 1} must be a positive finite number of ${unit}; got ${value}.`,
+    `The ${name} of the point with index ${index} must be above zero, from ${curveRange[0]} to ${curveRange[1]} ${unit}; got ${value}.`,
   );
 }
 
 function requireUncertainty(name: string, value: number): void {
-  if (value > 0 && value <= 1) return;
-  throw new OutOfDomainError(`${name} must be relative, above 0 and at most 1 (100 %); got ${value}.`);
+  requireBetween(`${name}, relative,`, value, [0, 1], { low: true });
+}
+
+function requireUnit(text: string): void {
+  const unit = typeof text === "string" ? readUnit(text) : undefined;
+  if (unit !== undefined && !("problem" in unit) && unit.unit === text && unit.kind === "signal" && !unit.isLevel)
+    return;
+  throw new OutOfDomainError(
+    `A curve needs the unit of its signal without prefix, such as V, A, g or 1, with densities to match; got ${quoted(text)}.`,
+  );
+}
+
+function tidyEntry(entry: CurveSourceEntry): CurveSourceEntry[] {
+  const key = tidyText(entry.key);
+  const value = tidyText(entry.value);
+  if (key === "" && value === "") return [];
+  if (`${key} `.includes(": ") || key.length > longestKey || isSettingKey(key))
+    throw new OutOfDomainError(
+      `The key of a source entry must have at most ${longestKey} characters and no colon, and be none of label, uncertainty and axis uncertainty, which are options; got ${quoted(key)}.`,
+    );
+  return [Object.freeze({ key, value })];
+}
+
+function said({ density, uncertainty, inFit }: CurvePoint): string {
+  return `${density} (uncertainty ${uncertainty}${inFit ? "" : ", aside"})`;
 }

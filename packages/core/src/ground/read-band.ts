@@ -1,44 +1,50 @@
 import { requireBand } from "./domain.js";
 import { MalformedDataError } from "./errors.js";
-import { parseQuantity } from "./quantity.js";
+import { quoted } from "./quoted.js";
+import { readQuantity } from "./read-quantity.js";
+
+/** Band edges. */
+export interface BandEdges {
+  readonly fromHz: number;
+  readonly toHz: number;
+}
 
 /**
- * A band as typed: "0.1Hz:10Hz", "0.1:10 kHz" (one unit for both), "0:inf".
+ * Reads a band as it is typed: `0.1Hz:80Hz`, `0.1:10 Hz`, `10 Hz : 20 kHz`, `0:1k`, `1Hz:inf`.
  *
- * @param text - lower and upper edge with a colon between.
- * @throws MalformedDataError for text that is no band; OutOfDomainError for crossed edges.
+ * @param text - lower and upper edge with a colon between. A lower edge without a unit takes that of the upper edge when it
+ *   is plain Hz; under `1:20 kHz` it could be 1 Hz or 1 kHz, so that is refused. 0 and inf (or ∞) need no unit.
+ * @throws MalformedDataError for text that is no band; OutOfDomainError where the edges are not 0 ≤ from < to.
  *
  * @example
  * ```ts
  * import { readBand } from "@quietband/core";
- * readBand("0.1 Hz : 80 Hz").toHz; // → 80
- * readBand("1:20 kHz").fromHz; // → 1000
+ * readBand("0.1Hz:80Hz"); // → {"fromHz":0.1,"toHz":80}
+ * readBand("10 Hz : 20 kHz").toHz; // → 20000
+ * readBand("0.1:10 Hz").fromHz; // → 0.1
  * ```
  */
-export function readBand(text: string): { readonly fromHz: number; readonly toHz: number } {
-  const [low, high, ...more] = text.split(":").map((edge) => edge.trim());
-  if (low === undefined || high === undefined || more.length > 0)
-    throw new MalformedDataError(
-      `Expected a band of two frequencies with a colon between, for instance 0.1Hz:10Hz; got "${text.slice(0, 40)}".`,
-    );
-  const upper = edgeOf(high, text);
-  const lower = edgeOf(low, text);
-  if (upper.unit === "" && upper.value !== 0 && upper.value !== Number.POSITIVE_INFINITY)
-    throw new MalformedDataError(
-      `Expected a unit on the upper edge of a band, for instance 0.1Hz:10Hz; got "${text.slice(0, 40)}".`,
-    );
-  // "1:20 kHz": the unit of the upper edge stands for both, its prefix included
-  const shared =
-    lower.unit === "" && lower.value !== 0 ? edgeOf(`${low}${high.replace(/^[^a-zA-Zµμ]*/, "")}`, text) : lower;
-  requireBand(shared.value, upper.value);
-  return Object.freeze({ fromHz: shared.value, toHz: upper.value });
+export function readBand(text: string): BandEdges {
+  const edges = (typeof text === "string" ? text : "").split(":", 3).map((edge) => edge.trim());
+  const [low = "", high = ""] = edges;
+  if (edges.length !== 2 || low === "" || high === "") throw notBand(text);
+  const toHz = edgeHz(high, text);
+  const fromHz = edgeHz(isNumber(low) && /[\d.]\s*Hz$/.test(high) ? `${low} Hz` : low, text);
+  requireBand(fromHz, toHz);
+  return Object.freeze({ fromHz, toHz });
 }
 
-function edgeOf(text: string, whole: string): { readonly value: number; readonly unit: string } {
-  if (/^(inf|infinity|∞)$/i.test(text)) return { value: Number.POSITIVE_INFINITY, unit: "" };
-  const found = parseQuantity(text, false);
-  if (found !== undefined && (found.unit === "Hz" || found.unit === "")) return found;
-  throw new MalformedDataError(
-    `Expected frequencies in Hz for the band "${whole.slice(0, 40)}"; got "${text.slice(0, 40)}".`,
-  );
+function edgeHz(edge: string, text: string): number {
+  if (/^(?:inf|infinity|∞)(?:\s*Hz)?$/i.test(edge)) return Number.POSITIVE_INFINITY;
+  if (!isNumber(edge)) return readQuantity(edge, { unit: "Hz" }).value;
+  if (Number(edge) === 0) return 0;
+  throw notBand(text);
+}
+
+function isNumber(edge: string): boolean {
+  return /^[\d.]/.test(edge) && Number.isFinite(Number(edge));
+}
+
+function notBand(text: string): MalformedDataError {
+  return new MalformedDataError(`Expected a band with units at its edges, such as 0.1Hz:80Hz; got ${quoted(text)}.`);
 }
