@@ -1,4 +1,5 @@
 import { makeWeighting } from "./make-weighting.js";
+import { polesAndZeros } from "./poles-and-zeros.js";
 import { soundPoles } from "./sound-poles.js";
 import type { Weighting } from "./weighting.js";
 
@@ -18,23 +19,6 @@ import type { Weighting } from "./weighting.js";
  */
 export function aWeighting(): Weighting {
   const [f1, f2, f3, f4] = soundPoles;
-  const shape = (hz: number): number => {
-    const x = hz * hz;
-    const ends = (x / (x + f1 * f1)) * (f4 ** 2 / (x + f4 * f4));
-    return ends * ends * (x / (x + f2 * f2)) * (x / (x + f3 * f3));
-  };
-  const atOneKilohertz = shape(1000);
-  return makeWeighting({
-    name: "A weighting",
-    knots: [f1, f2, f3, f4],
-    lowExponent: -8,
-    highExponent: 4,
-    rational: {
-      gain: f4 ** 4 / atOneKilohertz,
-      zerosAtOrigin: 4,
-      zeros: [],
-      poles: [f1, f1, f2, f3, f4, f4].map((hz) => ({ re: -hz, im: 0 })),
-    },
-    powerGainAt: (hz: number) => shape(hz) / atOneKilohertz,
-  });
+  const poles = [f1, f1, f2, f3, f4, f4].map((hz) => ({ re: -hz, im: 0 }));
+  return makeWeighting({ ...polesAndZeros({ poles, zerosAtOrigin: 4, atHz: 1000 }), name: "A weighting" });
 }

@@ -1,9 +1,12 @@
 import { makeWeighting } from "./make-weighting.js";
+import { polesAndZeros } from "./poles-and-zeros.js";
 import { soundPoles } from "./sound-poles.js";
 import type { Weighting } from "./weighting.js";
 
 /**
  * C weighting of sound levels, exactly 0 dB at 1 kHz: |H|² = g · f⁴/((f² + f₁²)² (f² + f₄²)²).
+ *
+ * Poles and frequencies as in {@link aWeighting}.
  *
  * @see IEC 61672-1:2013, annex E.
  *
@@ -15,23 +18,6 @@ import type { Weighting } from "./weighting.js";
  */
 export function cWeighting(): Weighting {
   const [f1, , , f4] = soundPoles;
-  const shape = (hz: number): number => {
-    const x = hz * hz;
-    const ends = (x / (x + f1 * f1)) * (f4 ** 2 / (x + f4 * f4));
-    return ends * ends;
-  };
-  const atOneKilohertz = shape(1000);
-  return makeWeighting({
-    name: "C weighting",
-    knots: [f1, f4],
-    lowExponent: -4,
-    highExponent: 4,
-    rational: {
-      gain: f4 ** 4 / atOneKilohertz,
-      zerosAtOrigin: 2,
-      zeros: [],
-      poles: [f1, f1, f4, f4].map((hz) => ({ re: -hz, im: 0 })),
-    },
-    powerGainAt: (hz: number) => shape(hz) / atOneKilohertz,
-  });
+  const poles = [f1, f1, f4, f4].map((hz) => ({ re: -hz, im: 0 }));
+  return makeWeighting({ ...polesAndZeros({ poles, zerosAtOrigin: 2, atHz: 1000 }), name: "C weighting" });
 }

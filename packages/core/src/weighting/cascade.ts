@@ -39,11 +39,10 @@ function inRow(one: Weighting, other: Weighting): Weighting {
     );
   const rational = collected(one.rational, other.rational);
   const pieces =
-    one.pieces !== undefined && other.pieces !== undefined
-      ? Object.freeze(multiplyPieces(one.pieces, other.pieces))
-      : undefined;
+    one.pieces !== undefined && other.pieces !== undefined ? multiplyPieces(one.pieces, other.pieces) : undefined;
   const lobes = lobesOf(one, other);
   const repeatsHz = repeatsTogether(one, other);
+  const factors = [...(one.factors ?? [one]), ...(other.factors ?? [other])];
   return makeWeighting({
     name: `${one.name}, ${other.name}`,
     support,
@@ -54,7 +53,12 @@ function inRow(one: Weighting, other: Weighting): Weighting {
     ...(pieces !== undefined && { pieces }),
     ...(lobes !== undefined && { lobes }),
     ...(repeatsHz !== undefined && { repeatsHz }),
-    powerGainAt: (hz: number) => one.powerGainAt(hz) * other.powerGainAt(hz),
+    factors,
+    powerGainAt(hz: number): number {
+      let gain = 1;
+      for (const factor of factors) gain *= factor.powerGainAt(hz);
+      return gain;
+    },
   });
 }
 
@@ -86,7 +90,17 @@ function lobesOf(one: Weighting, other: Weighting): LobedGain | undefined {
   };
 }
 
-/** A product repeats where both do, at the same rate, or where one does and the other is level. */
+/** A product repeats where both do and one rate is a whole multiple of the other, or where one does and the other is level. */
 function repeatsTogether(one: Weighting, other: Weighting): number | undefined {
-  return one.repeatsHz === other.repeatsHz ? one.repeatsHz : undefined;
+  if (isLevel(one)) return other.repeatsHz;
+  if (isLevel(other)) return one.repeatsHz;
+  if (one.repeatsHz === undefined || other.repeatsHz === undefined) return undefined;
+  const [low, high] = [Math.min(one.repeatsHz, other.repeatsHz), Math.max(one.repeatsHz, other.repeatsHz)];
+  const multiple = high / low;
+  return Math.abs(multiple - Math.round(multiple)) <= 2 * Number.EPSILON * multiple ? high : undefined;
+}
+
+/** The same gain at all frequencies. */
+function isLevel({ rational }: Weighting): boolean {
+  return rational !== undefined && rational.poles.length + rational.zeros.length + rational.zerosAtOrigin === 0;
 }

@@ -1,5 +1,7 @@
 import { requirePositive } from "../ground/domain.js";
 import { OutOfDomainError } from "../ground/errors.js";
+import { completeOptions } from "../ground/options.js";
+import { polynomialRoots } from "../numerics/polynomial-roots.js";
 import { requireCoefficients } from "./coefficients.js";
 import { inName, makeWeighting } from "./make-weighting.js";
 import { tapGain } from "./tap-gain.js";
@@ -8,19 +10,26 @@ import type { Weighting } from "./weighting.js";
 
 /** What {@link iirFilter} takes: y[k] = (Σ numerator[i]·x[k−i] − Σ_{i≥1} denominator[i]·y[k−i]) / denominator[0]. */
 export interface IirFilterOptions {
+  /** Coefficients of the present and the past inputs b; at least one, finite, not all zero. */
   readonly numerator: readonly number[];
+  /** Coefficients of the present and the past outputs a, the first not zero. */
   readonly denominator: readonly number[];
+  /** Rate of the samples f_s, Hz; positive. */
   readonly sampleRateHz: number;
 }
 
-/** Samples a coefficient over which peaks of the gain are looked for. */
-const samplesACoefficient = 64;
+const needed: IirFilterOptions = Object.freeze({
+  numerator: Object.freeze([]),
+  denominator: Object.freeze([]),
+  sampleRateHz: Number.NaN,
+});
 
 /**
  * A recursive digital filter: |H|² = |Σ b_k e^(−2πikf/f_s)|²/|Σ a_k e^(−2πikf/f_s)|², which repeats at f_s.
  *
- * @throws MalformedDataError for coefficients that are empty or not finite; OutOfDomainError for an unstable filter (a pole on
- *   or outside the unit circle, by the step-down recursion of Schur and Cohn) or a rate that is not positive.
+ * @throws MalformedDataError for coefficients that are empty, all zero or not finite; OutOfDomainError for a rate that is not
+ *   positive or an unstable filter: a pole on or outside the unit circle, by the step-down recursion of Schur and Cohn.
+ * @see E. I. Jury, Theory and Application of the z-Transform Method, 1964.
  *
  * @example
  * ```ts
@@ -30,50 +39,52 @@ const samplesACoefficient = 64;
  * noiseBandwidth(average).hz; // → 33.333
  * ```
  */
-export function iirFilter({ numerator, denominator, sampleRateHz }: IirFilterOptions): Weighting {
-  const above = tapGain(requireCoefficients("numerator", numerator));
-  const recursion = requireCoefficients("denominator", denominator);
-  const rate = requirePositive("sampleRateHz", sampleRateHz, "Hz");
-  if (!isStable(recursion))
-    throw new OutOfDomainError(
-      "denominator makes an unstable filter: a pole lies on or outside the unit circle, so it has no noise gain; check the signs of its coefficients.",
-    );
-  const below = tapGain(recursion);
-  const gainAt = (hz: number): number => {
-    const turns = turnsAtRate(hz, rate);
-    return above.powerAt(turns) / below.powerAt(turns);
-  };
+export function iirFilter(options: IirFilterOptions): Weighting {
+  const given = completeOptions("iirFilter", needed, options);
+  const numerator = requireCoefficients("numerator", given.numerator);
+  const denominator = requireCoefficients("denominator", given.denominator);
+  const rate = requirePositive("sampleRateHz", given.sampleRateHz, "Hz");
+  requireStable(denominator);
+  const above = tapGain(numerator);
+  const below = tapGain(denominator);
   return makeWeighting({
     name: `IIR filter, ${numerator.length} and ${denominator.length} coefficients, ${inName(rate)} Hz`,
-    knots: peaksOf(gainAt, rate, samplesACoefficient * (numerator.length + denominator.length)),
+    knots: polynomialRoots(denominator.toReversed()).flatMap(({ re, im }) => knotsOf(re, im, rate)),
     lowExponent: -2 * above.zerosAtDc,
     highExponent: 0,
     repeatsHz: rate,
-    powerGainAt: gainAt,
+    powerGainAt(hz: number): number {
+      const turns = turnsAtRate(hz, rate);
+      return above.powerAt(turns) / below.powerAt(turns);
+    },
   });
 }
 
 /** All poles inside the unit circle: every reflection coefficient of the step-down recursion is below 1 in size. */
-function isStable(denominator: readonly number[]): boolean {
+function requireStable(denominator: readonly number[]): void {
   const lead = denominator[0] as number;
-  if (lead === 0) return false;
+  if (lead === 0)
+    throw new OutOfDomainError("denominator must begin with the coefficient of the present output, not zero; got 0.");
   let rest = denominator.map((value) => value / lead);
   while (rest.length > 1) {
     const reflection = rest.at(-1) as number;
-    if (!(Math.abs(reflection) < 1)) return false;
+    if (!(Math.abs(reflection) < 1))
+      throw new OutOfDomainError(
+        `denominator must have all its poles inside the unit circle; it has one on or outside (reflection coefficient ${reflection}), so its noise grows without end; check the signs of its coefficients.`,
+      );
     const scale = 1 / (1 - reflection * reflection);
     const reversed = rest.toReversed();
     rest = rest.slice(0, -1).map((value, index) => scale * (value - reflection * (reversed[index] as number)));
   }
-  return true;
 }
 
-/** Frequencies of the local extremes in the first half period, its end, and the same mirrored in the second. */
-function peaksOf(gainAt: (hz: number) => number, rate: number, count: number): number[] {
-  const gains = Array.from({ length: count + 1 }, (_, index) => gainAt((0.5 * rate * index) / count));
-  const peaks = gains.flatMap((gain, index) => {
-    const [left, right] = [gains[index - 1] ?? gain, gains[index + 1] ?? gain];
-    return (gain - left) * (gain - right) > 0 ? [(0.5 * rate * index) / count] : [];
-  });
-  return [...peaks, ...peaks.map((hz) => rate - hz), (0.5 * rate) / count, 0.5 * rate, rate];
+/** The resonance of a pole in the z plane and its flanks in steps of three, in the first half period and mirrored. */
+function knotsOf(re: number, im: number, rate: number): number[] {
+  const half = 0.5 * rate;
+  const centre = (Math.abs(Math.atan2(im, re)) / Math.PI) * half;
+  const halfWidth = (-Math.log(Math.hypot(re, im)) / Math.PI) * half;
+  const knots = [centre];
+  for (let away = halfWidth; away < half; away *= 3) knots.push(centre - away, centre + away);
+  const inside = knots.filter((hz) => hz > 0 && hz < half);
+  return [...inside, ...inside.map((hz) => rate - hz), half, rate];
 }

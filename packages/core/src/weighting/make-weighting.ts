@@ -6,14 +6,16 @@ const everywhere: readonly [number, number] = Object.freeze([0, Number.POSITIVE_
 
 /**
  * Freezes a weighting to its last array, sorts its knots, drops those outside and fills in the support that most have: all
- * frequencies. What is given must be the maker's own, not the caller's.
+ * frequencies. A rational form whose gain the doubles cannot hold (a hundred poles at 1 kHz: 1e600) is left out. What is given
+ * must be the maker's own, not the caller's.
  */
 export function makeWeighting(given: Given): Weighting {
-  const { support = everywhere } = given;
+  const { support = everywhere, rational, ...rest } = given;
   const knots = [...new Set(given.knots ?? [])]
     .filter((hz) => hz > support[0] && hz < support[1])
     .toSorted((one, other) => one - other);
-  return deepFrozen({ ...given, support: [...support] as const, knots });
+  const held = rational !== undefined && rational.gain > 0 && rational.gain < Number.POSITIVE_INFINITY;
+  return deepFrozen({ ...rest, ...(held && { rational }), support: [...support] as const, knots });
 }
 
 type GivenLobed = Omit<Given, "lobes"> & { readonly lobes: Pick<LobedGain, "lobeHz" | "parts" | "peaksEveryHz"> };

@@ -2,7 +2,7 @@ import { requirePositive, requireWhole } from "../ground/domain.js";
 import { OutOfDomainError } from "../ground/errors.js";
 import { completeOptions } from "../ground/options.js";
 import { inName, makeWeighting } from "./make-weighting.js";
-import { placeFactors } from "./quadratic-pairs.js";
+import { placeFactors } from "./place-factors.js";
 import { flankKnots } from "./resonance.js";
 import type { ComplexHz, Weighting } from "./weighting.js";
 
@@ -65,7 +65,8 @@ export function polesAndZeros(options: PolesAndZerosOptions): Weighting {
     }
     return value;
   };
-  const scale = powerGain / shapeAt(atHz);
+  const shapeThere = shapeAt(atHz);
+  const scale = powerGain / shapeThere;
   if (!(scale > 0 && scale < Number.POSITIVE_INFINITY))
     throw new OutOfDomainError(
       `atHz must be a frequency in Hz where the filter has a gain; at ${atHz} Hz it has none.`,
@@ -81,7 +82,7 @@ export function polesAndZeros(options: PolesAndZerosOptions): Weighting {
       zeros,
       poles,
     },
-    powerGainAt: (hz: number) => scale * shapeAt(hz),
+    powerGainAt: (hz: number) => powerGain * (shapeAt(hz) / shapeThere),
   });
 }
 

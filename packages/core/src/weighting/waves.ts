@@ -5,7 +5,7 @@ export function steady(value: number): Wave {
   return { seconds: 0, cosine: value, sine: 0 };
 }
 
-/** cosine · cos(2π f seconds). */
+/** cosine · cos(2π f seconds) + sine · sin(2π f seconds). */
 export function wave(seconds: number, cosine: number, sine = 0): Wave {
   return { seconds, cosine, sine };
 }
@@ -25,21 +25,29 @@ export function evenSinePower(order: number, seconds: number): Wave[] {
 
 /** Product of two sums of waves: Re(A e^ia)·Re(B e^ib) = ½ Re(AB e^i(a+b)) + ½ Re(AB* e^i(a−b)); equal delays are merged. */
 export function multiplyWaves(one: readonly Wave[], other: readonly Wave[]): Wave[] {
-  const byDelay = new Map<number, { cosine: number; sine: number }>();
-  const add = (seconds: number, cosine: number, sine: number): void => {
-    const sum = byDelay.get(Math.abs(seconds)) ?? { cosine: 0, sine: 0 };
-    sum.cosine += cosine;
-    sum.sine += seconds < 0 ? -sine : sine;
-    byDelay.set(Math.abs(seconds), sum);
-  };
+  const products: Wave[] = [];
   for (const a of one)
     for (const b of other) {
       const [cc, ss] = [0.5 * a.cosine * b.cosine, 0.5 * a.sine * b.sine];
       const [cs, sc] = [0.5 * a.cosine * b.sine, 0.5 * a.sine * b.cosine];
-      add(a.seconds + b.seconds, cc - ss, cs + sc);
-      add(a.seconds - b.seconds, cc + ss, sc - cs);
+      products.push(wave(a.seconds + b.seconds, cc - ss, cs + sc));
+      const later = a.seconds >= b.seconds;
+      products.push(wave(Math.abs(a.seconds - b.seconds), cc + ss, later ? sc - cs : cs - sc));
     }
-  return [...byDelay].map(([seconds, { cosine, sine }]) => ({ seconds, cosine, sine: seconds === 0 ? 0 : sine }));
+  return merged(products.toSorted((a, b) => a.seconds - b.seconds));
+}
+
+/** Neighbours in delay become one where only the rounding of their sums tells them apart. */
+function merged(ascending: readonly Wave[]): Wave[] {
+  const same = 4 * Number.EPSILON * (ascending.at(-1)?.seconds ?? 0);
+  const waves: Wave[] = [];
+  for (const { seconds, cosine, sine } of ascending) {
+    const last = waves.at(-1);
+    if (last === undefined || seconds - last.seconds > same)
+      waves.push(wave(seconds <= same ? 0 : seconds, cosine, seconds <= same ? 0 : sine));
+    else waves[waves.length - 1] = wave(last.seconds, last.cosine + cosine, last.seconds === 0 ? 0 : last.sine + sine);
+  }
+  return waves;
 }
 
 /** Product of two lists of parts. */

@@ -23,6 +23,8 @@ export interface Weighting {
   readonly rational?: RationalGain;
   /** |H|² = u^(2·numeratorOrder) / (1 + u^(2·order)), u = f/cutoffHz: first order and Butterworth, one closed integral. */
   readonly saturating?: SaturatingGain;
+  /** What a cascade is made of, cascades in it taken apart: their gains multiply. */
+  readonly factors?: readonly Weighting[];
   /** Hz after which the whole gain repeats exactly: the rate of a digital filter. */
   readonly repeatsHz?: number;
   /** Lobes: how an integrator crosses any number of them with bounded work. */
