@@ -1,5 +1,5 @@
 import { type Curve, OutOfDomainError, type Spectrum } from "@quietband/core";
-import { refuseUnknown } from "./plot-options.js";
+import { refuseUnknownKeys, requirePositive } from "../convert/domain.js";
 
 /** What {@link densityPlot} draws; at least one curve or model. */
 export interface DensityPlotOptions {
@@ -50,8 +50,8 @@ const optionNames: readonly (keyof DensityPlotOptions)[] = [
 
 /** Refuses what cannot be drawn and returns the unit of the signal. */
 export function checkDensityOptions(options: DensityPlotOptions): string {
-  refuseUnknown("densityPlot", optionNames, options);
-  const { curves = [], models = [], band, interval } = options;
+  refuseUnknownKeys("densityPlot", optionNames, options);
+  const { curves = [], models = [], band, floor, interval } = options;
   const units = new Set([...curves.map(({ unit }) => unit), ...models.map(({ spectrum }) => spectrum.unit)]);
   const [unit] = units;
   if (unit === undefined)
@@ -64,19 +64,15 @@ export function checkDensityOptions(options: DensityPlotOptions): string {
     throw new OutOfDomainError(
       `band must run from fromHz, 0 Hz or more, up to a higher toHz; got ${band.fromHz} Hz to ${band.toHz} Hz.`,
     );
-  requireLevel("floor", options.floor, `${unit}/√Hz`);
-  for (const name of ["cornerHz", "fromHz", "toHz"] as const) requireLevel(name, options[name], "Hz");
+  if (floor !== undefined) requirePositive("floor", floor, `${unit}/√Hz`);
+  for (const name of ["cornerHz", "fromHz", "toHz"] as const)
+    if (options[name] !== undefined) requirePositive(name, options[name], "Hz");
   if (options.fromHz !== undefined && options.toHz !== undefined && options.fromHz >= options.toHz)
     throw new OutOfDomainError(
       `The frequency axis must run from fromHz up to toHz; got ${options.fromHz} Hz to ${options.toHz} Hz.`,
     );
   if (interval !== undefined) checkInterval(interval);
   return unit;
-}
-
-function requireLevel(name: string, value: number | undefined, unit: string): void {
-  if (value === undefined || (value > 0 && value < Number.POSITIVE_INFINITY)) return;
-  throw new OutOfDomainError(`${name} must be a positive finite number of ${unit}; got ${value}.`);
 }
 
 function checkInterval({ frequencies, lower, upper }: DensityInterval): void {

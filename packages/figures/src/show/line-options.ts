@@ -1,5 +1,5 @@
 import { OutOfDomainError } from "@quietband/core";
-import { refuseUnknown } from "./plot-options.js";
+import { refuseUnknownKeys } from "../convert/domain.js";
 
 /** One line: as many x as y, x ascending. */
 export interface PlotSeries {
@@ -39,7 +39,7 @@ export interface LinePlotOptions {
 
 /** Refuses what cannot be drawn; `where` names the function in the message. */
 export function checkLineOptions(where: string, options: LinePlotOptions): void {
-  refuseUnknown(where, ["lines", "x", "y", "marks", "title", "note", "width", "height"], options);
+  refuseUnknownKeys(where, ["lines", "x", "y", "marks", "title", "note", "width", "height"], options);
   if (options.lines.length === 0) throw new OutOfDomainError(`${where} needs at least one line to draw; got none.`);
   for (const { label, x, y } of options.lines) {
     if (x.length === y.length && x.length > 0) continue;

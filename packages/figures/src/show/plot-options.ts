@@ -1,13 +1,5 @@
 import { OutOfDomainError } from "@quietband/core";
 
-/** Refuses options nobody reads: a misspelt one must not pass as a default. */
-export function refuseUnknown(where: string, known: readonly string[], given: object): void {
-  for (const key of Object.keys(given)) {
-    if (known.includes(key)) continue;
-    throw new OutOfDomainError(`${where} knows no option "${key}"; it takes ${known.join(", ")}.`);
-  }
-}
-
 /** The size of a picture in pixels, completed and checked. */
 export function pictureSize({
   width = 760,

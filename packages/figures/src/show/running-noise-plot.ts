@@ -1,10 +1,10 @@
 import { OutOfDomainError } from "@quietband/core";
+import { refuseUnknownKeys } from "../convert/domain.js";
 import { positiveExtent } from "./extent.js";
 import { inkPlot } from "./ink-plot.js";
 import { layoutLinePlot } from "./line-layout.js";
 import type { PlotMark } from "./line-options.js";
 import type { PlotLayout } from "./plot-layout.js";
-import { refuseUnknown } from "./plot-options.js";
 
 /** What {@link runningNoisePlot} draws. */
 export interface RunningNoisePlotOptions {
@@ -56,7 +56,11 @@ const logFrom = 10;
 
 /** Lays out the plot; nothing drawn yet. */
 export function layoutRunningNoisePlot(options: RunningNoisePlotOptions): PlotLayout {
-  refuseUnknown("runningNoisePlot", ["curves", "unit", "moving", "marks", "title", "note", "width", "height"], options);
+  refuseUnknownKeys(
+    "runningNoisePlot",
+    ["curves", "unit", "moving", "marks", "title", "note", "width", "height"],
+    options,
+  );
   const { curves, unit, moving = "toHz", ...rest } = options;
   const extent = positiveExtent(curves.flatMap(({ rms }) => rms));
   if (curves.length > 0 && extent === undefined)

@@ -1,8 +1,9 @@
 import { OutOfDomainError } from "@quietband/core";
+import { refuseUnknownKeys, requireFinite } from "../convert/domain.js";
 import type { Box } from "./box.js";
 import { margin, type TextLine, textLine, textSize } from "./frame.js";
 import { picture, textInk } from "./ink-plot.js";
-import { pictureWidth, refuseUnknown } from "./plot-options.js";
+import { pictureWidth } from "./plot-options.js";
 import { ink, seriesStyle } from "./series-style.js";
 import { type SvgElement, svgElement } from "./svg.js";
 import { lineHeight, textWidth, wrapText } from "./text-measure.js";
@@ -26,7 +27,7 @@ export interface ShareRow {
 }
 
 /** A row with its places. */
-export interface PlacedShare {
+interface PlacedShare {
   readonly label: readonly TextLine[];
   readonly value: TextLine;
   readonly bar: Box;
@@ -87,14 +88,10 @@ const gap = 10;
 
 /** Lays out the bars; nothing drawn yet. */
 export function layoutShareBars(options: ShareBarsOptions): ShareBarsLayout {
-  refuseUnknown("shareBars", ["rows", "title", "note", "width"], options);
-  const { rows, title = "Shares of the noise power", note = "" } = options;
+  refuseUnknownKeys("shareBars", ["rows", "title", "note", "width"], options);
+  const { rows, title = "", note = "" } = options;
   if (rows.length === 0) throw new OutOfDomainError("shareBars needs at least one row; got none.");
-  for (const { label, share } of rows)
-    if (!Number.isFinite(share))
-      throw new OutOfDomainError(
-        `The share of "${label}" must be a finite number, 1 for all of the power; got ${share}.`,
-      );
+  for (const { label, share } of rows) requireFinite(`share of "${label}"`, share);
   const width = pictureWidth(options.width);
   const ranked = rows.toSorted((a, b) => Math.abs(b.share) - Math.abs(a.share));
   const shown = ranked.slice(0, mostRows);
@@ -130,8 +127,8 @@ export function layoutShareBars(options: ShareBarsOptions): ShareBarsLayout {
     top += textSize.note * lineHeight;
   }
   return {
-    title,
-    description: describe(ranked),
+    title: title || "Shares of the noise power",
+    description: `${describe(ranked)} ${note}`.trimEnd(),
     frame: { width, height: Math.ceil(top + margin - rowGap / 2) },
     zero: columns.zero,
     rows: placed,
