@@ -32,7 +32,7 @@ export function periodicPower(
   const [fromHz, end] = [(first - 0.5) * rate, (last + 0.5) * rate];
   const nothing: RoutedPower = { power: 0, error: 0, status: "converged", evaluations: 0 };
   if (last < first) return { fromHz: Math.min(fromHz, toHz), toHz, power: nothing };
-  const { offsets, weights, mean } = periodRule(lobes, rate);
+  const { offsets, weights, mean } = periodRule(lobes, rate, weighting.knots[0] ?? rate);
   const smoothAt = (hz: number): number => spectrum.powerDensityAt(hz) * lobes.smoothAt(hz);
   let power = 0;
   let evaluations = 0;
@@ -69,9 +69,10 @@ export function periodicPower(
 function periodRule(
   lobes: LobedGain,
   rate: number,
+  lowestKnot: number,
 ): { readonly offsets: readonly number[]; readonly weights: readonly number[]; readonly mean: number } {
   const half = 0.5 * rate;
-  const start = 1e-6 * Math.min(lobes.lobeHz, rate);
+  const start = 1e-6 * Math.min(lobes.lobeHz, rate, lowestKnot);
   const fine = lobedRule(lobedFactor(lobes), [start, half], []);
   const moments = new Float64Array(nodesPerPeriod);
   const values = new Float64Array(nodesPerPeriod);
@@ -80,7 +81,7 @@ function periodRule(
     for (let n = 0; n < nodesPerPeriod; n += 2)
       moments[n] = (moments[n] as number) + 2 * weight * (values[n] as number);
   };
-  // below the first node the gain is level to 1e-12 of itself, over 1e-6 of a lobe
+  // below the first node the gain is level to 1e-12 of itself, over 1e-6 of a lobe or of its first knot
   add(0.5 * start, start * lobes.coreAt(0.5 * start));
   for (let k = 0; k < fine.nodes.length; k += 1) add(fine.nodes[k] as number, fine.weights[k] as number);
   const rule = gaussLegendre(nodesPerPeriod);

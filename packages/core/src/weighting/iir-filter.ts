@@ -3,9 +3,10 @@ import { OutOfDomainError } from "../ground/errors.js";
 import { completeOptions } from "../ground/options.js";
 import { polynomialRoots } from "../numerics/polynomial-roots.js";
 import { requireCoefficients } from "./coefficients.js";
-import { inName, makeWeighting } from "./make-weighting.js";
+import { inName, makeLobed } from "./make-weighting.js";
 import { tapGain } from "./tap-gain.js";
 import { turnsAtRate } from "./turns-at-rate.js";
+import { steady } from "./waves.js";
 import type { Weighting } from "./weighting.js";
 
 /** What {@link iirFilter} takes: y[k] = (Σ numerator[i]·x[k−i] − Σ_{i≥1} denominator[i]·y[k−i]) / denominator[0]. */
@@ -47,16 +48,19 @@ export function iirFilter(options: IirFilterOptions): Weighting {
   requireStable(denominator);
   const above = tapGain(numerator);
   const below = tapGain(denominator);
-  return makeWeighting({
+  const gainAt = (hz: number): number => {
+    const turns = turnsAtRate(hz, rate);
+    return above.powerAt(turns) / below.powerAt(turns);
+  };
+  return makeLobed({
     name: `IIR filter, ${numerator.length} and ${denominator.length} coefficients, ${inName(rate)} Hz`,
     knots: polynomialRoots(denominator.toReversed()).flatMap(({ re, im }) => knotsOf(re, im, rate)),
     lowExponent: -2 * above.zerosAtDc,
     highExponent: 0,
     repeatsHz: rate,
-    powerGainAt(hz: number): number {
-      const turns = turnsAtRate(hz, rate);
-      return above.powerAt(turns) / below.powerAt(turns);
-    },
+    // Its response never ends, so its waves would not: the gain stands as an envelope that repeats.
+    lobes: { lobeHz: rate, peaksEveryHz: [rate], parts: [{ envelopeAt: gainAt, waves: [steady(1)] }] },
+    powerGainAt: gainAt,
   });
 }
 
