@@ -1,0 +1,176 @@
+import {
+  type BandNoise,
+  bandNoise,
+  NoiseError,
+  OutOfDomainError,
+  type Spectrum,
+  type Weighting,
+} from "@quietband/core";
+import { refuseUnknownKeys, requireFinite, requireNotNegative, shown } from "../convert/domain.js";
+import type { BudgetSource } from "./budget-options.js";
+import type { NamedSpectrum } from "./named-spectrum.js";
+import { isSpectrum, type NoiseSource } from "./noise-source.js";
+import { cascadeOf, type SignalPath, type WayOut } from "./signal-path.js";
+import { bandWords, type StatedNoise } from "./stated-noise.js";
+import type { Tone } from "./tone.js";
+
+/** One source as it arrives where the budget is stated. */
+export interface BudgetLine {
+  readonly name: string;
+  readonly given: BudgetSource;
+  readonly source: NoiseSource;
+  /** Amplitude gain from the source to the place, sign included. */
+  readonly gain: number;
+  readonly weighting: Weighting | undefined;
+  /** Power at the place, unit². */
+  readonly power: number;
+  /** Bound on its relative error. */
+  readonly powerError: number;
+  /** Peak-to-peak value of a tone at the place; 0 for noise. */
+  readonly swing: number;
+  /** Relative standard uncertainty of the rms that the spectrum or the statement carries. */
+  readonly ownUncertainty: number | undefined;
+  /** The same, stated in the budget: of a gain, of a temperature. */
+  readonly addedUncertainty: number | undefined;
+  readonly partFactor: number | undefined;
+  readonly outsidePoints: BandNoise["outsidePoints"] | undefined;
+  readonly notes: readonly string[];
+}
+
+export interface LinesContext {
+  readonly path: SignalPath;
+  readonly place: WayOut;
+  readonly fromHz: number;
+  readonly toHz: number;
+}
+
+const sourceKeys: readonly string[] = Object.freeze([
+  "source",
+  "name",
+  "gain",
+  "unit",
+  "weighting",
+  "enters",
+  "standardUncertainty",
+  "partFactor",
+]);
+
+/** Every source measured at the place; the unit they share. */
+export function budgetLines(
+  sources: readonly BudgetSource[],
+  context: LinesContext,
+): { readonly lines: readonly BudgetLine[]; readonly unit: string } {
+  const measure = bandMeter(context.fromHz, context.toHz);
+  const weightingOf = weightingFinder(context.path);
+  const names = new Set<string>();
+  let unit: string | undefined;
+  const lines = sources.map((given, index): BudgetLine => {
+    refuseUnknownKeys(`Source ${index + 1} of a budget`, sourceKeys, given);
+    const name = nameOf(given, index);
+    if (names.has(name))
+      throw new OutOfDomainError(`Sources of a budget need different names; got ${shown(name)} twice.`);
+    names.add(name);
+    return inSource(name, () => {
+      const own = given.unit ?? given.source.unit;
+      unit ??= own;
+      if (own !== unit)
+        throw new OutOfDomainError(
+          `its noise is in ${own} where the others are in ${unit}; give the unit behind its gain with unit.`,
+        );
+      return lineOf(given, name, context, { measure, weighting: weightingOf(given) });
+    });
+  });
+  return { lines, unit: unit ?? "V" };
+}
+
+type Meter = (spectrum: Spectrum, weighting: Weighting | undefined) => BandNoise;
+
+function lineOf(
+  given: BudgetSource,
+  name: string,
+  context: LinesContext,
+  { measure, weighting }: { readonly measure: Meter; readonly weighting: Weighting | undefined },
+): BudgetLine {
+  const { source, gain: ownGain = 1, enters = "input", standardUncertainty, partFactor } = given;
+  requireFinite("gain", ownGain);
+  if (standardUncertainty !== undefined) requireNotNegative("standardUncertainty", standardUncertainty);
+  if (partFactor !== undefined && !(partFactor >= 1 && partFactor < Number.POSITIVE_INFINITY))
+    throw new OutOfDomainError(`partFactor must be a finite factor of 1 or more; got ${shown(partFactor)}.`);
+  const gain = (ownGain * context.path.wayFrom(enters).gain) / context.place.gain;
+  const shared = { name, given, source, gain, weighting, addedUncertainty: standardUncertainty, partFactor };
+  if (isSpectrum(source)) {
+    const found = measure(source, weighting);
+    return {
+      ...shared,
+      power: gain * gain * found.power,
+      powerError: 2 * found.numericalError,
+      swing: 0,
+      ownUncertainty: found.standardUncertainty,
+      outsidePoints: found.outsidePoints,
+      notes: [...((source as Partial<NamedSpectrum>).assumptions ?? []), ...found.notes],
+    };
+  }
+  const arrived = source.kind === "tone" ? toneGain(source, weighting, context) : 1;
+  return {
+    ...shared,
+    power: arrived * gain * gain * source.rms * source.rms,
+    powerError: 4 * Number.EPSILON,
+    swing: source.kind === "tone" ? Math.sqrt(arrived) * Math.abs(gain) * source.peakToPeak : 0,
+    ownUncertainty: source.kind === "stated" ? source.standardUncertainty : undefined,
+    outsidePoints: undefined,
+    notes: [...source.assumptions, ...(source.kind === "stated" ? bandNotes(source, context) : [])],
+  };
+}
+
+/** Power gain to a tone: what the weighting does at its frequency, nothing where the band leaves it out. */
+function toneGain({ frequencyHz }: Tone, weighting: Weighting | undefined, { fromHz, toHz }: LinesContext): number {
+  if (frequencyHz < fromHz || frequencyHz > toHz) return 0;
+  return weighting?.powerGainAt(frequencyHz) ?? 1;
+}
+
+function bandNotes({ band }: StatedNoise, { fromHz, toHz }: LinesContext): string[] {
+  if (band === undefined) return ["No band is stated for it; it is taken to be the budget's."];
+  if (band[0] === fromHz && band[1] === toHz) return [];
+  return [`It is stated for ${bandWords(band)}; the budget's band is ${bandWords([fromHz, toHz])}.`];
+}
+
+/** Band noise that measures one spectrum behind one weighting once: many parts of a kind cost one integral. */
+function bandMeter(fromHz: number, toHz: number): Meter {
+  const known = new Map<Weighting | undefined, Map<Spectrum, BandNoise>>();
+  return (spectrum, weighting) => {
+    const behind = known.get(weighting) ?? new Map<Spectrum, BandNoise>();
+    known.set(weighting, behind);
+    const before = behind.get(spectrum);
+    if (before !== undefined) return before;
+    const found = bandNoise(spectrum, { fromHz, toHz, weighting });
+    behind.set(spectrum, found);
+    return found;
+  };
+}
+
+/** Own filter, then the stages on the way out. Sources that enter at one place without a filter of their own share one. */
+export function weightingFinder(path: SignalPath): (given: BudgetSource) => Weighting | undefined {
+  const shared = new Map<string, Weighting | undefined>();
+  return ({ enters = "input", weighting }) => {
+    const { weightings } = path.wayFrom(enters);
+    if (weighting !== undefined) return cascadeOf([weighting, ...weightings]);
+    if (!shared.has(enters)) shared.set(enters, cascadeOf(weightings));
+    return shared.get(enters);
+  };
+}
+
+function nameOf({ name, source }: BudgetSource, index: number): string {
+  const found = name ?? (source as Partial<NamedSpectrum>).name ?? `source ${index + 1}`;
+  if (typeof found === "string" && found !== "") return found;
+  throw new OutOfDomainError(`The name of source ${index + 1} must be a text that is not empty; got ${shown(found)}.`);
+}
+
+/** An error says which source it came from. */
+function inSource<Made>(name: string, make: () => Made): Made {
+  try {
+    return make();
+  } catch (error) {
+    if (error instanceof NoiseError) error.message = `Source "${name}": ${error.message}`;
+    throw error;
+  }
+}
