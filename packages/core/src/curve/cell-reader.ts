@@ -15,7 +15,7 @@ export interface CellReader {
   /** Relative standard uncertainty of the density, NaN for an empty cell or a dash. Densities come first. */
   uncertainty(from: number, to: number, given: UnitReading | undefined, line: number): number;
   /** Relative effect of a common error on the density; may be zero or negative. */
-  effect(from: number, to: number, given: UnitReading | undefined, line: number): number;
+  common(from: number, to: number, given: UnitReading | undefined, line: number): number;
   /** The quantity of the densities read so far. */
   quantity(): DensityQuantity | undefined;
 }
@@ -91,7 +91,7 @@ export function cellReader(text: string, mark: DecimalMark): CellReader {
       if (found.value > 0 && found.value <= 1) return found.value;
       throw refusal(line, `expected ${anUncertainty}, above 0 and at most 100 %, got ${quoted(text.slice(from, to))}`);
     },
-    effect(from, to, given, line) {
+    common(from, to, given, line) {
       const { value, unit } = typed(from, to, given, line, "an effect of a common error such as 1.5 %");
       const scale = uncertaintyScale(unit, quantity?.kind ?? "density");
       if (scale !== undefined && Number.isFinite(value)) return scale * value;

@@ -21,46 +21,49 @@ export interface CurveLines {
   readonly line: readonly number[];
 }
 
-const lineFeed = 10;
-const carriageReturn = 13;
-const hash = 35;
-
 /** Takes a text apart into lines, by one pass over its characters: rows by the million stay places, not strings. */
 export function curveLines(text: string): CurveLines {
   const comments: CommentLine[] = [];
   const from: number[] = [];
   const to: number[] = [];
   const line: number[] = [];
-  let number = 0;
-  for (let start = 0; start <= text.length; ) {
-    number += 1;
-    const end = lineEnd(text, start);
+  // a carriage return before a line feed is a blank at the end of the line; alone it ends lines where no line feed does
+  const lineBreak = text.includes("\n") ? "\n" : "\r";
+  const hashAfter = nextPlace(text, "#");
+  const breakAfter = nextPlace(text, lineBreak);
+  for (let start = 0, number = 1; start <= text.length; number += 1) {
+    const end = breakAfter(start);
     if (end - start > longestLine)
       throw refusal(
         number,
         `expected at most ${longestLine} characters, got ${end - start}, beginning ${quoted(text.slice(start, start + 20))}`,
       );
-    let contentEnd = end;
-    const comment = hashIn(text, start, end);
-    if (comment < end) {
-      comments.push({ line: number, text: text.slice(comment + 1, end) });
-      contentEnd = comment;
-    }
-    const first = skipBlanks(text, start, contentEnd);
-    if (first < contentEnd) {
-      if (from.length > mostRows)
-        // one more line may be a heading
-        throw refusal(number, `expected at most ${mostRows} rows, got more; thin the curve first`);
+    const content = Math.min(hashAfter(start), end);
+    if (content < end) comments.push({ line: number, text: text.slice(content + 1, end) });
+    const first = skipBlanks(text, start, content);
+    if (first < content) {
+      // one line more than rows: the first may be a heading
+      if (from.length > mostRows) throw refusal(number, `expected at most ${mostRows} rows, got more; thin the curve`);
       from.push(first);
-      to.push(skipBlanksBack(text, first, contentEnd));
+      to.push(skipBlanksBack(text, first, content));
       line.push(number);
     }
-    start = text.charCodeAt(end) === carriageReturn && text.charCodeAt(end + 1) === lineFeed ? end + 2 : end + 1;
+    start = end + 1;
   }
   return { comments, from, to, line };
 }
 
-/** The place of the first blank run's end at or after `from`. */
+/** The place of a character at or after a start, the text's end where there is none; each stretch is searched once. */
+function nextPlace(text: string, character: string): (start: number) => number {
+  let found = -1;
+  return (start) => {
+    if (found < start) found = text.indexOf(character, start);
+    if (found < 0) found = text.length;
+    return found;
+  };
+}
+
+/** The first place in [from, to) that is no blank. */
 export function skipBlanks(text: string, from: number, to: number): number {
   let at = from;
   while (at < to && isBlank(text.charCodeAt(at))) at += 1;
@@ -71,21 +74,5 @@ export function skipBlanks(text: string, from: number, to: number): number {
 export function skipBlanksBack(text: string, from: number, to: number): number {
   let at = to;
   while (at > from && isBlank(text.charCodeAt(at - 1))) at -= 1;
-  return at;
-}
-
-function lineEnd(text: string, from: number): number {
-  let at = from;
-  for (; at < text.length; at += 1) {
-    const code = text.charCodeAt(at);
-    if (code === lineFeed || code === carriageReturn) break;
-  }
-  return at;
-}
-
-/** Looks no further than the line: a search to the end of the text from every line would be quadratic. */
-function hashIn(text: string, from: number, to: number): number {
-  let at = from;
-  while (at < to && text.charCodeAt(at) !== hash) at += 1;
   return at;
 }

@@ -1,65 +1,64 @@
 import { quoted } from "../ground/quoted.js";
 import { cellReader, type DensityQuantity } from "./cell-reader.js";
 import { isAside, splitCells } from "./curve-cells.js";
-import type { Column, ColumnRole } from "./curve-columns.js";
+import type { Column } from "./curve-columns.js";
 import type { CurveLines } from "./curve-lines.js";
 import type { CurveTable } from "./curve-table.js";
 import { refusal } from "./refusal.js";
 
 /** The rows of a table by columns, in SI units, in the order typed. */
 export interface CurveRows {
-  readonly frequency: readonly number[];
-  readonly density: readonly number[];
+  readonly frequency: Float64Array;
+  readonly density: Float64Array;
   /** NaN where none was stated. */
-  readonly uncertainty: readonly number[];
-  readonly inFit: readonly boolean[];
+  readonly uncertainty: Float64Array;
+  /** 1 where the row is an aside. */
+  readonly aside: Uint8Array;
   /** One array a column of common errors. */
-  readonly effects: readonly (readonly number[])[];
+  readonly effects: readonly Float64Array[];
   readonly quantity: DensityQuantity;
 }
 
-/** Reads all rows; allocates nothing a row but what it keeps, as long as the cells are plain numbers. */
-export function curveRows(text: string, { from, to, line }: CurveLines, table: CurveTable): CurveRows {
-  const { separator, columns, firstRow } = table;
-  const reader = cellReader(text, table.mark);
-  const place = (role: ColumnRole): number => columns.findIndex((column) => column.role === role);
-  const [first, second, third] = [place("frequency"), place("density"), place("uncertainty")];
-  const common = columns.flatMap(({ role }, index) => (role === "common" ? [index] : []));
-  const unit = columns.map((column) => column.unit);
+/** Reads all rows; allocates nothing a row as long as the cells are plain numbers. */
+export function curveRows(
+  text: string,
+  lines: CurveLines,
+  { separator, mark, columns, firstRow }: CurveTable,
+): CurveRows {
+  const count = lines.from.length - firstRow;
+  const reader = cellReader(text, mark);
   const rows = {
-    frequency: [] as number[],
-    density: [] as number[],
-    uncertainty: [] as number[],
-    inFit: [] as boolean[],
+    frequency: new Float64Array(count),
+    density: new Float64Array(count),
+    uncertainty: new Float64Array(count).fill(Number.NaN),
+    aside: new Uint8Array(count),
+    effects: columns.filter(({ role }) => role === "common").map(() => new Float64Array(count)),
   };
-  const effects = common.map((): number[] => []);
+  // densities before uncertainties: their kind decides what 5 % means
+  const order = (["frequency", "density", "uncertainty", "common"] as const).flatMap((role) =>
+    columns.flatMap((column, place) => (column.role === role ? [{ place, role, unit: column.unit }] : [])),
+  );
+  const firstCommon = order.length - rows.effects.length;
+  const values = order.map(({ role }, index) =>
+    role === "common" ? (rows.effects[index - firstCommon] as Float64Array) : rows[role],
+  );
   const bounds: number[] = [];
-  for (let index = firstRow; index < from.length; index += 1) {
-    const start = from[index] as number;
-    const end = to[index] as number;
-    const number = line[index] as number;
-    const count = splitCells(text, start, end, separator, bounds);
-    const filled = filledCells(bounds, count, columns.length);
-    const last = 2 * (filled - 1);
-    const aside = isAside(text, bounds[last] as number, bounds[last + 1] as number);
+  for (let row = 0; row < count; row += 1) {
+    const start = lines.from[firstRow + row] as number;
+    const end = lines.to[firstRow + row] as number;
+    const line = lines.line[firstRow + row] as number;
+    const filled = filledCells(bounds, splitCells(text, start, end, separator, bounds), columns.length);
+    const aside = isAside(text, bounds[2 * filled - 2] as number, bounds[2 * filled - 1] as number);
+    if (aside) rows.aside[row] = 1;
     const cells = aside ? filled - 1 : filled;
-    if (cells !== columns.length) throw wrongCount(text.slice(start, end), cells, columns, number);
-    rows.frequency.push(
-      reader.frequency(bounds[2 * first] as number, bounds[2 * first + 1] as number, unit[first], number),
-    );
-    rows.density.push(
-      reader.density(bounds[2 * second] as number, bounds[2 * second + 1] as number, unit[second], number),
-    );
-    rows.uncertainty.push(
-      third < 0
-        ? Number.NaN
-        : reader.uncertainty(bounds[2 * third] as number, bounds[2 * third + 1] as number, unit[third], number),
-    );
-    rows.inFit.push(!aside);
-    for (const [which, at] of common.entries())
-      effects[which]?.push(reader.effect(bounds[2 * at] as number, bounds[2 * at + 1] as number, unit[at], number));
+    if (cells !== columns.length) throw wrongCount(text.slice(start, end), cells, columns, line);
+    for (let index = 0; index < order.length; index += 1) {
+      const { place, role, unit } = order[index] as (typeof order)[number];
+      const value = reader[role](bounds[2 * place] as number, bounds[2 * place + 1] as number, unit, line);
+      (values[index] as Float64Array)[row] = value;
+    }
   }
-  return { ...rows, effects, quantity: reader.quantity() as DensityQuantity };
+  return { ...rows, quantity: reader.quantity() as DensityQuantity };
 }
 
 /** Cells without the empty ones that a separator at the end of a row makes. */

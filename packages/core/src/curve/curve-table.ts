@@ -34,10 +34,7 @@ export function curveTable(text: string, lines: CurveLines, given: GivenUnits): 
       `A curve needs at least two rows at different frequencies, such as "1 kHz, 85 nV/√Hz"; got ${count}${first === "" ? "" : ` after ${quoted(first)}`}.`,
     );
   if (count > mostRows)
-    throw refusal(
-      lines.line[firstRow + mostRows] ?? 0,
-      `expected at most ${mostRows} rows, got more; thin the curve first`,
-    );
+    throw refusal(lines.line[firstRow + mostRows] ?? 0, `expected at most ${mostRows} rows, got more; thin the curve`);
   const separator = separatorOf(first);
   const cells = cellCount(lineText(firstRow), separator);
   const columns =

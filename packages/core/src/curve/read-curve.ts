@@ -86,14 +86,11 @@ export function readCurve(text: string, options: ReadCurveOptions = {}): Curve {
   if (points.length < 2)
     throw new MalformedDataError("A curve needs at least two rows at different frequencies; got one frequency only.");
   const names = table.columns.filter(({ role }) => role === "common").map(({ name }) => name);
-  const effects = rows.effects.map(
-    (column, index): CommonEffect =>
-      Object.freeze({
-        name: names[index] ?? "",
-        effects: Object.freeze(order?.map((at) => column[at] as number) ?? column),
-      }),
-  );
-  const allGiven = general !== undefined || rows.uncertainty.every((value) => !Number.isNaN(value));
+  const effects = names.map((name, index): CommonEffect => {
+    const column = Array.from(rows.effects[index] ?? []);
+    return Object.freeze({ name, effects: Object.freeze(order?.map((at) => column[at] as number) ?? column) });
+  });
+  const allGiven = general !== undefined || !rows.uncertainty.some(Number.isNaN);
   return Object.freeze({
     unit: rows.quantity.signal,
     label: comments.label?.text ?? tidyText(options.label ?? ""),
@@ -105,20 +102,15 @@ export function readCurve(text: string, options: ReadCurveOptions = {}): Curve {
   });
 }
 
-function curvePoints(
-  rows: CurveRows,
-  general: number | undefined,
-  { line }: CurveLines,
-  firstRow: number,
-): CurvePoint[] {
-  return rows.frequency.map((frequency, index) => {
+function curvePoints(rows: CurveRows, general: number | undefined, lines: CurveLines, firstRow: number): CurvePoint[] {
+  return Array.from(rows.frequency, (frequency, index): CurvePoint => {
     const uncertainty = rows.uncertainty[index] as number;
     return Object.freeze({
       frequency,
       density: rows.density[index] as number,
       uncertainty: Number.isNaN(uncertainty) ? (general ?? assumedPointUncertainty) : uncertainty,
-      inFit: rows.inFit[index] as boolean,
-      line: line[firstRow + index] as number,
+      inFit: rows.aside[index] === 0,
+      line: lines.line[firstRow + index] as number,
     });
   });
 }

@@ -135,11 +135,13 @@ export function plainSpelling(text: string): string {
   return text
     .replace(/[\s\u200b\ufeff]/gu, "")
     .replaceAll("**", "^")
-    .replace(/[µμΩ²⁴½−·⋅∙*]/gu, (character) => plainCharacters[character] ?? character);
+    .replaceAll("^½", "½")
+    .replace(/[\u03bc\u2126²⁴½−⋅∙*]/gu, (character) => plainCharacters[character] ?? character);
 }
 
+/** Greek µ, the ohm sign, raised digits, other dots and minuses. */
 const plainCharacters: Readonly<Record<string, string>> = Object.freeze({
-  μ: "µ",
+  "\u03bc": "µ",
   "\u2126": "Ω",
   "²": "^2",
   "⁴": "^4",

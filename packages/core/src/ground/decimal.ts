@@ -26,7 +26,7 @@ export function decimalIn(text: string, from: number, to: number, mark: DecimalM
   for (; at < to && isDigit(text.charCodeAt(at)); at += 1) integer = integer * 10 + (text.charCodeAt(at) - 48);
   let digits = at - start;
   let fraction = 0;
-  if (at < to && text[at] === mark) {
+  if (at < to && text.charCodeAt(at) === (mark === "." ? 46 : 44)) {
     const point = at;
     for (at += 1; at < to && isDigit(text.charCodeAt(at)); at += 1) integer = integer * 10 + (text.charCodeAt(at) - 48);
     fraction = at - point - 1;

@@ -14,7 +14,7 @@ export interface NumberParts {
 }
 
 /** Letters that may stand for the decimal mark; R is that mark alone. IEC 60062, clause on letter and digit codes. */
-const codeLetters = "RKkMGTpnµμumf";
+const codeLetters = "RKkMGTpnµ\u03bcumf";
 
 /** Splits a text that begins with a number; undefined when it does not. One pass, no backtracking. */
 export function numberParts(text: string, mark: DecimalMark): NumberParts | undefined {

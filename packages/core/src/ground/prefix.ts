@@ -31,7 +31,12 @@ export const siPrefixes: readonly (readonly [symbol: string, exponent: number])[
 );
 
 /** Beside the symbols: the Greek letter µ, u for µ, and K for kilo (IEC 60062, and everyday use). */
-const exponents: ReadonlyMap<string, number> = new Map<string, number>([...siPrefixes, ["μ", -6], ["u", -6], ["K", 3]]);
+const exponents: ReadonlyMap<string, number> = new Map<string, number>([
+  ...siPrefixes,
+  ["\u03bc", -6],
+  ["u", -6],
+  ["K", 3],
+]);
 
 /** Power of ten of a prefix as people type it, or undefined. */
 export function prefixExponent(symbol: string): number | undefined {

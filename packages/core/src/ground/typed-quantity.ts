@@ -29,9 +29,9 @@ export function typedQuantity(
   if (parts === undefined) return { problem: `${quoted(text)} does not begin with a number` };
   if (parts.rest.startsWith(","))
     return { problem: `${quoted(text)} has a comma that is no decimal mark here; ${commaAdvice}` };
-  if (/^[\d.]/.test(parts.rest)) return { problem: `${quoted(text)} holds two numbers; ${commaAdvice}` };
   const unit = unitBehind(text, parts, given, reader);
-  if ("problem" in unit) return unit;
+  if ("problem" in unit)
+    return /^[\d.]/.test(parts.rest) ? { problem: `${quoted(text)} holds two numbers; ${commaAdvice}` } : unit;
   if (parts.letterExponent !== 0 && hasPrefix(unit)) return twoPrefixes(text, unit.unit);
   const usedMark = parts.letter === "" ? mark : ".";
   return { value: valueIn(unit, parts.number, usedMark, parts.letterExponent), unit };
