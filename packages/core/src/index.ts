@@ -23,6 +23,12 @@ export { type PicksOptions, pointsFromPicks } from "./curve/points-from-picks.js
 export { type ReadCurveOptions, readCurve } from "./curve/read-curve.js";
 export { thinCurve } from "./curve/thin-curve.js";
 export { writeCurve } from "./curve/write-curve.js";
+export type { FitAlternative } from "./fit/choose.js";
+export { type FitResidual, type FittedCurve, fitCurve } from "./fit/fit-curve.js";
+export type { ExponentPrior, FitModelName, FitOptions } from "./fit/fit-options.js";
+export type { LeftOutPoint } from "./fit/fit-points.js";
+export type { FitFinding } from "./fit/judge.js";
+export type { Misreading } from "./fit/misreadings.js";
 export {
   DivergentIntegralError,
   MalformedDataError,

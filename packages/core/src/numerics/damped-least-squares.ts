@@ -41,7 +41,7 @@ export function dampedLeastSquares(
     trialResiduals: new Float64Array(count),
     trialJacobian: new Float64Array(count * size),
   };
-  let parameters = Float64Array.from(start);
+  let parameters: Float64Array = Float64Array.from(start);
   residualsAt(parameters, work.residuals, work.jacobian);
   let best = squared(work.residuals);
   const scale = new Float64Array(size);
