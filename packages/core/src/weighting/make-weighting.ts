@@ -15,7 +15,15 @@ export function makeWeighting(given: Given): Weighting {
     .filter((hz) => hz > support[0] && hz < support[1])
     .toSorted((one, other) => one - other);
   const held = rational !== undefined && rational.gain > 0 && rational.gain < Number.POSITIVE_INFINITY;
-  return deepFrozen({ ...rest, ...(held && { rational }), support: [...support] as const, knots });
+  return deepFrozen({
+    ...rest,
+    ...(held && { rational }),
+    // −2·0 is −0, which a report would print.
+    lowExponent: given.lowExponent + 0,
+    highExponent: given.highExponent + 0,
+    support: [...support] as const,
+    knots,
+  });
 }
 
 type GivenLobed = Omit<Given, "lobes"> & { readonly lobes: Pick<LobedGain, "lobeHz" | "parts" | "peaksEveryHz"> };
