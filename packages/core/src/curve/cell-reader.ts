@@ -1,8 +1,8 @@
-import { type DecimalMark, decimalIn } from "../ground/decimal.js";
+import { type DecimalMark, decimalIn, isMinus } from "../ground/decimal.js";
 import { quoted } from "../ground/quoted.js";
 import { levelValue, typedQuantity } from "../ground/typed-quantity.js";
 import { readUnit, type UnitKind, type UnitProblem, type UnitReading } from "../ground/unit.js";
-import { curveRange } from "./assumed-point-uncertainty.js";
+import { curveRange } from "./curve-range.js";
 import { refusal } from "./refusal.js";
 import { relativeUncertainty, uncertaintyScale } from "./relative-uncertainty.js";
 
@@ -85,7 +85,7 @@ export function cellReader(text: string, mark: DecimalMark): CellReader {
       return checked(amplitude(value, unit), from, to, line, aDensity);
     },
     uncertainty(from, to, given, line) {
-      if (to === from || (to === from + 1 && text[from] === "-")) return Number.NaN;
+      if (to === from || (to === from + 1 && isMinus(text.charCodeAt(from)))) return Number.NaN;
       const found = relativeUncertainty(text.slice(from, to), given, quantity?.kind ?? "density", mark, reader);
       if ("problem" in found) throw refusal(line, `expected ${anUncertainty}, but ${found.problem}`);
       if (found.value > 0 && found.value <= 1) return found.value;

@@ -82,7 +82,10 @@ export function cellCount(row: string, separator: Separator): number {
  * the rows have, names have several words and each cell ends with its bracket: `noise density [nV/√Hz]`.
  */
 export function splitHeading(heading: string, separator: Separator, most: number): readonly string[] {
-  if (separator !== " ") return heading.split(separator).map((cell) => cell.trim());
+  if (separator !== " ") {
+    const cells = heading.split(separator).map((cell) => cell.trim());
+    return cells.slice(0, cells.findLastIndex((cell) => cell !== "") + 1);
+  }
   const words = heading.split(/\s+/);
   const cells = joined(words, (word) => /^[[(]/.test(word));
   return cells.length <= most ? cells : joined(words, (_, before) => !/[\])]$/.test(before));

@@ -4,7 +4,7 @@ import { readUnit, type UnitProblem, type UnitReading } from "../ground/unit.js"
 import { refusal } from "./refusal.js";
 
 /** What a column holds; "common" is an error that all points share (see `CommonEffect`). */
-export type ColumnRole = "frequency" | "density" | "uncertainty" | "common";
+type ColumnRole = "frequency" | "density" | "uncertainty" | "common";
 
 /** A column of a table. */
 export interface Column {
@@ -22,18 +22,15 @@ export function plainColumns(count: number): readonly Column[] {
   return roles.slice(0, count > 2 ? 3 : 2).map((role) => ({ role, name: "", unit: undefined }));
 }
 
-/**
- * What a heading says of its columns. A column is known by its unit, else by its name, else by its place: frequency,
- * density, uncertainty.
- */
+/** What a heading says of its columns: known by their units, else by name, else by place, frequency before density. */
 export function headingColumns(cells: readonly string[], line: number): readonly Column[] {
   const read = cells.map((cell) => headingCell(cell, line));
   const taken = new Set(read.map(({ role }) => role));
-  const open = (["frequency", "density", "uncertainty"] as const).filter((role) => !taken.has(role));
+  const open = (["frequency", "density"] as const).filter((role) => !taken.has(role));
   const columns = read.map((cell): Column => {
     const role = cell.role ?? open.shift();
     if (role !== undefined) return { role, name: cell.name, unit: cell.unit };
-    throw refusal(line, `expected columns for frequency, density and uncertainty, got one more, ${quoted(cell.name)}`);
+    throw refusal(line, `expected columns of frequency, density and uncertainty, got one more, ${quoted(cell.name)}`);
   });
   for (const role of ["frequency", "density", "uncertainty"] as const) {
     const count = columns.filter((column) => column.role === role).length;
@@ -59,23 +56,26 @@ interface HeadingCell {
 
 function headingCell(cell: string, line: number): HeadingCell {
   const { name, unit } = nameAndUnit(cell);
-  if (unit !== undefined && "problem" in unit)
-    throw refusal(line, `expected a heading such as ${example}, but ${unit.problem}`);
+  if (unit === undefined) return { name, unit, role: namesUncertainty(name) ? "uncertainty" : undefined };
+  if ("problem" in unit) throw refusal(line, `expected a heading such as ${example}, but ${unit.problem}`);
+  if (unit.kind !== "signal") return { name, unit, role: "density" };
+  if (unit.unit === "Hz") return { name, unit, role: "frequency" };
   const common = /^common\b:?\s*(.*)$/i.exec(name);
-  if (common !== null) return { name: common[1] ?? "", unit, role: "common" };
-  if (unit === undefined) return { name, unit, role: /uncertainty/i.test(name) ? "uncertainty" : undefined };
-  const role = roleOf(unit);
-  if (role !== undefined) return { name, unit, role };
+  if (isRelative(unit) && common !== null) return { name: common[1] ?? "", unit, role: "common" };
+  if (isRelative(unit) && namesUncertainty(name)) return { name, unit, role: "uncertainty" };
   throw refusal(
     line,
-    `expected a heading such as ${example}, but ${quoted(cell)} is in ${unit.unit}, which is neither a frequency nor a density`,
+    `expected columns of frequency, density (as nV/√Hz or dBV/√Hz) and uncertainty, got ${quoted(cell)} in ${unit.unit}`,
   );
 }
 
-function roleOf({ kind, unit }: UnitReading): ColumnRole | undefined {
-  if (kind !== "signal") return "density";
-  if (unit === "Hz") return "frequency";
-  return unit === "1" || unit === "dB" ? "uncertainty" : undefined;
+/** A ratio or dB that is named otherwise is a gain or a distortion, and must not pass for an uncertainty. */
+function namesUncertainty(name: string): boolean {
+  return name === "" || /uncertainty|error|±|σ|sigma|^u\b/i.test(name);
+}
+
+function isRelative({ unit }: UnitReading): boolean {
+  return unit === "1" || unit === "dB";
 }
 
 interface NameAndUnit {
@@ -118,6 +118,7 @@ function split(cell: string, at: number): NameAndUnit | undefined {
 /** A text as the unit of a column, where it is one of a column or was surely meant as one. */
 function meant(name: string, text: string): NameAndUnit | undefined {
   const unit = readUnit(unwrapped(text));
-  const isUnit = "problem" in unit ? unit.meantAsUnit === true : roleOf(unit) !== undefined && text !== "1";
-  return isUnit ? { name, unit } : undefined;
+  if ("problem" in unit) return unit.meantAsUnit === true ? { name, unit } : undefined;
+  const isOfColumn = unit.kind !== "signal" || unit.unit === "Hz" || isRelative(unit);
+  return isOfColumn && text !== "1" ? { name, unit } : undefined;
 }

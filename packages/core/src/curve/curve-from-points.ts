@@ -4,9 +4,10 @@ import { refuseUnknownKeys } from "../ground/options.js";
 import { quoted } from "../ground/quoted.js";
 import { readUnit } from "../ground/unit.js";
 import { ascendingOrder } from "./ascending-order.js";
-import { assumedPointUncertainty, curveRange } from "./assumed-point-uncertainty.js";
+import { assumedPointUncertainty } from "./assumed-point-uncertainty.js";
 import type { Curve, CurvePoint, CurveSourceEntry } from "./curve.js";
 import { isSettingKey, longestKey } from "./curve-comments.js";
+import { curveRange } from "./curve-range.js";
 import { tidyText } from "./tidy-text.js";
 
 /** A point as given to {@link curveFromPoints}; SI units. */

@@ -4,7 +4,7 @@ import { refusal } from "./refusal.js";
 
 /** Most rows and longest line, in characters, that a curve's text may have. */
 export const mostRows = 1_000_000;
-export const longestLine = 1000;
+const longestLine = 1000;
 
 /** A comment: what stands behind # on a line, and which line. */
 export interface CommentLine {

@@ -1,6 +1,6 @@
 import { MalformedDataError, OutOfDomainError } from "../ground/errors.js";
 import { refuseUnknownKeys } from "../ground/options.js";
-import { sentence } from "../ground/quoted.js";
+import { quoted, sentence } from "../ground/quoted.js";
 import { readUnit, type UnitReading } from "../ground/unit.js";
 import { ascendingOrder } from "./ascending-order.js";
 import { assumedPointUncertainty } from "./assumed-point-uncertainty.js";
@@ -32,7 +32,7 @@ export interface ReadCurveOptions {
  *   `85 nV/√Hz`, `4k7`), or in the options. Densities may be amplitude densities (nV/√Hz, nV/rtHz, nV/Hz^0.5), power densities
  *   (V²/Hz, g^2/Hz) or levels (dBV/√Hz); all of one text are of one quantity.
  * - The uncertainty is relative and standard (k = 1): `5 %` or `0.4 dB`; 5 % of a power density is 2.5 % of the density. A dash
- *   stands for none.
+ *   stands for none. The heading calls the column uncertainty, error, u or σ.
  * - A row whose last cell is the word `aside` is kept for show and left out of fits.
  * - `#` begins a comment. `# key: value` is provenance, kept in order; `# label:` names the curve, `# uncertainty:` holds for points
  *   that state none, `# axis uncertainty:` is an error common to all points. A column headed `common <name> [%]` gives an error
@@ -122,7 +122,7 @@ function statedRatio(stated: StatedText | undefined, { quantity }: CurveRows): n
   const found = relativeUncertainty(stated.text, undefined, quantity.kind);
   if ("problem" in found) throw refusal(stated.line, `${expected}, but ${found.problem}`);
   if (found.value > 0 && found.value <= 1) return found.value;
-  throw refusal(stated.line, `${expected}, got ${stated.text}`);
+  throw refusal(stated.line, `${expected}, got ${quoted(stated.text)}`);
 }
 
 function unitOption(

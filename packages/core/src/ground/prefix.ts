@@ -1,5 +1,5 @@
 /** SI prefixes, smallest first: symbol and power of ten (SI brochure, 9th edition, table 7). */
-export const siPrefixes: readonly (readonly [symbol: string, exponent: number])[] = Object.freeze(
+const siPrefixes: readonly (readonly [symbol: string, exponent: number])[] = Object.freeze(
   (
     [
       ["q", -30],

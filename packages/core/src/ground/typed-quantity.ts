@@ -38,7 +38,7 @@ export function typedQuantity(
 }
 
 /** Value in the canonical unit of a number written in a unit; digits and prefix are rounded together. */
-export function valueIn(unit: UnitReading, number: string, mark: DecimalMark, exponent = 0): number {
+function valueIn(unit: UnitReading, number: string, mark: DecimalMark, exponent = 0): number {
   if (unit.isLevel) return levelValue(decimalIn(number, 0, number.length, mark, 0), unit);
   const power = unit.kind === "powerDensity" ? 2 : 1;
   return unit.factor * decimalIn(number, 0, number.length, mark, unit.exponent + exponent * power);

@@ -86,7 +86,7 @@ export function readUnit(text: string): UnitReading | UnitProblem {
 }
 
 /** Canonical text of a unit: V, V/√Hz, V²/Hz; (m/s²)²/Hz where the signal is itself a quotient. */
-export function unitText(signal: string, kind: UnitKind): string {
+function unitText(signal: string, kind: UnitKind): string {
   if (kind === "signal") return signal;
   if (kind === "density") return `${signal}/√Hz`;
   if (signal === "1") return "1/Hz";

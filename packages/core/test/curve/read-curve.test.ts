@@ -73,6 +73,18 @@ describe("headings", () => {
     ]);
   });
 
+  test("a column of common-mode noise is a density, and an empty last column none at all", () => {
+    expect(pairs("f [Hz], common-mode noise [nV/√Hz],\n1200, 85,\n10, 120,")).toEqual(expected);
+  });
+
+  test.each(["uncertainty [%]", "u [%]", "u(e)/%", "%", "relative error [%]", "σ [%]"])(
+    "%s is an uncertainty",
+    (name) => {
+      const { points } = readCurve(`f [Hz], e [nV/√Hz], ${name}\n1, 2, 5\n2, 3, 4`);
+      expect(points.map(({ uncertainty }) => uncertainty)).toEqual([0.05, 0.04]);
+    },
+  );
+
   test("between blanks, names may have several words", () => {
     const heading = "noise frequency [Hz] input noise density [nV/√Hz] uncertainty [%]";
     expect(pairs(`${heading}\n1200 85 5\n10 120 5`)).toEqual(expected);
@@ -247,10 +259,12 @@ describe("refusals name the line, what stands there and what was expected", () =
     ["f/Hz, e_n/nV/Hz\n1, 2\n2, 3", "did you mean nV/√Hz or nV²/Hz?"],
     ["f [Hz], density [xV/√Hz]\n1, 2\n2, 3", '"xV/√Hz" is no unit known here'],
     ["f [Hz], density (xV/√Hz)\n1, 2\n2, 3", '"xV/√Hz" is no unit known here'],
-    ["f [Hz], density [nV]\n1, 2\n2, 3", "is in V, which is neither a frequency nor a density"],
+    ["f [Hz], density [nV]\n1, 2\n2, 3", 'got "density [nV]" in V'],
     ["f [Hz], e [nV/√Hz], max [nV/√Hz]\n1, 2, 3\n2, 3, 4", "got 2 in"],
-    ["f [Hz], level [dB]\n1, 2\n2, 3", "got no column of density"],
+    ["f [Hz], level [dB]\n1, 2\n2, 3", 'density (as nV/√Hz or dBV/√Hz) and uncertainty, got "level [dB]" in dB'],
     ["f, e, u, v\n1, 2, 3, 4\n1, 2, 3, 4", 'got one more, "v"'],
+    ["f [Hz], e [nV/√Hz], gain [dB]\n1, 2, 3\n2, 3, 3", 'got "gain [dB]" in dB'],
+    ["f [Hz], e [nV/√Hz], gain\n1, 2, 3 dB\n2, 3, 3 dB", 'got one more, "gain"'],
     ["f [Hz]\n1\n2", "got no column of density"],
     [
       "1, 2\n3, 4",
@@ -266,7 +280,7 @@ describe("refusals name the line, what stands there and what was expected", () =
     ["Hz\tnV/√Hz\n1,000\t5\n2,000\t6", 'Line 2: expected numbers that can be read in one way, got "1,000·5"'],
     ["Hz\tnV/√Hz\n0,5\t5\n1.5\t6", '"1.5" holds two numbers'],
     ["f [Hz]  e [nV/√Hz]\n0,1 1900\n0,2 1300", '"0,1" has a comma that is no decimal mark here'],
-    ["f [Hz], e [V/√Hz], common axis [V]\n1, 2, 3\n2, 3, 4", "expected an effect of a common error"],
+    ["f [Hz], e [V/√Hz], common axis [V]\n1, 2, 3\n2, 3, 4", 'got "common axis [V]" in V'],
     ["f [Hz], e [V/√Hz], common axis [%]\n1, 2, x\n2, 3, 4", "expected an effect of a common error"],
   ])("%j", (text, said) => {
     const read = (): unknown => readCurve(text);

@@ -7,6 +7,8 @@ test.each([
   ["12345,678", "decimal"],
   ["1,0000", "decimal"],
   ["1,000; 0,5", "decimal"],
+  ["1234,567", "decimal"],
+  ["123,456", "ambiguous"],
   ["1,000", "ambiguous"],
   ["12,500 Hz", "ambiguous"],
   ["nothing, 5", "none"],

@@ -67,6 +67,7 @@ describe("readQuantity", () => {
   test("the unit expected settles what a prefix alone means", () => {
     expect(readQuantity("85n", { unit: "V/√Hz" }).value).toBe(85e-9);
     expect(readQuantity("4n", { unit: "V²/Hz" }).value).toBe(4e-18);
+    expect(readQuantity("4n7", { unit: "V²/Hz" }).value).toBe(4.7e-18);
     expect(readQuantity("5 m", { unit: "V" }).value).toBe(5e-3);
     expect(readQuantity("5 m", { unit: "m" }).value).toBe(5);
     expect(readQuantity("5", { unit: "Hz" })).toEqual({ value: 5, unit: "Hz" });
