@@ -3,14 +3,14 @@ import { commaUse } from "./decimal-mark.js";
 import { MalformedDataError } from "./errors.js";
 import { refuseUnknownKeys } from "./options.js";
 import { quoted, sentence } from "./quoted.js";
-import { typedQuantity } from "./typed-quantity.js";
-import { readUnit, type UnitReading } from "./unit.js";
+import { type TypedQuantity, typedQuantity } from "./typed-quantity.js";
+import { readUnit, type UnitProblem, type UnitReading } from "./unit.js";
 
 /** A value in SI units. */
 export interface Quantity {
   /** In `unit`, without prefix. */
   readonly value: number;
-  /** "Hz", "V", "V/√Hz", "V²/Hz", "ppm" ... */
+  /** "Hz", "V", "V/√Hz", "V²/Hz" ...; "1" for ratios, "" where none was typed. */
   readonly unit: string;
 }
 
@@ -28,12 +28,12 @@ const longestQuantity = 100;
  *
  * The value is the double nearest to what was written, prefix included: `85 nV` is exactly 85e-9. Levels become amplitudes,
  * 10^(dB/20) for signals and densities; %, ppm and ppb become ratios of unit "1"; min, h and d become seconds. A plain dB has
- * no reference and stays dB.
+ * no reference and stays dB. A number without unit has the unit "", unless one is expected.
  *
  * @param text - a number and a unit; either µ, or u; point or comma as decimal mark.
  * @param options - `unit`: what is expected.
  * @returns the value in the unit without prefix.
- * @throws MalformedDataError for text that is no quantity, has another unit than expected or none, is not finite, or can be
+ * @throws MalformedDataError for text that is no quantity, has another unit than expected, is not finite, or can be
  *   read in two ways (`1,000 Hz`).
  *
  * @example
@@ -55,7 +55,7 @@ export function readQuantity(text: string, options: ReadQuantityOptions = {}): Q
     throw new MalformedDataError(
       `${expected}; got a text of ${typed.length} characters, more than ${longestQuantity}.`,
     );
-  const found = typedQuantity(typed, wanted, decimalMarkOf(typed));
+  const found = typedOrPure(typed, wanted);
   if ("problem" in found) throw new MalformedDataError(sentence(`${expected}, but ${found.problem}`));
   const { value, unit } = found;
   if (wanted !== undefined && unit.unit !== wanted.unit)
@@ -63,6 +63,24 @@ export function readQuantity(text: string, options: ReadQuantityOptions = {}): Q
   if (!Number.isFinite(value)) throw new MalformedDataError(`${expected}, but ${quoted(typed)} is no finite number.`);
   return Object.freeze({ value, unit: unit.unit });
 }
+
+/** Where nothing is expected, `5 m` is five metres, and `5` and `4k7` are numbers of no unit. */
+function typedOrPure(text: string, wanted: UnitReading | undefined): TypedQuantity | UnitProblem {
+  const mark = decimalMarkOf(text);
+  const found = typedQuantity(text, wanted, mark);
+  if (wanted !== undefined || !("problem" in found)) return found;
+  const pure = typedQuantity(text, pureNumber, mark);
+  return "problem" in pure ? found : pure;
+}
+
+const pureNumber: UnitReading = Object.freeze({
+  unit: "",
+  signal: "",
+  kind: "signal",
+  exponent: 0,
+  factor: 1,
+  isLevel: false,
+});
 
 function expectedUnit(text: string): UnitReading {
   const unit = readUnit(text);
