@@ -36,7 +36,8 @@ export function powerLawIntegralError(term: PowerLawTerm, from: number, to: numb
 /** ln(to/from) for 0 < from < to, without cancellation when they are close. */
 export function logRatio(from: number, to: number): number {
   const excess = (to - from) / from;
-  return excess < 1 ? Math.log1p(excess) : Math.log(to / from);
+  if (excess < 1) return Math.log1p(excess);
+  return excess < Number.POSITIVE_INFINITY ? Math.log(to / from) : Math.log(to) - Math.log(from);
 }
 
 function levelAt(at: number, level: number, exponent: number, x: number): number {

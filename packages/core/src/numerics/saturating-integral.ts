@@ -2,6 +2,7 @@ import type { BoundedValue } from "./bounded-value.js";
 import type { PowerLawTerm } from "./power-law.js";
 import { logRatio } from "./power-law-integral.js";
 import { saturatingPart } from "./saturating-part.js";
+import { wholePower } from "./whole-power.js";
 
 /** u^(2·numeratorOrder) / (1 + u^(2·order)), u = x/cutoff: first-order and Butterworth power gains. */
 export interface Saturation {
@@ -10,17 +11,20 @@ export interface Saturation {
   readonly numeratorOrder: number;
 }
 
-const infinity: BoundedValue = Object.freeze({ value: Number.POSITIVE_INFINITY, error: 0 });
-
 /**
  * ∫ level · (x/at)^(−a) · u^(2m)/(1 + u^(2n)) dx over [from, to], u = x/cutoff, 0 ≤ from < to ≤ ∞, with a bound on its absolute
- * error; infinite where it diverges.
+ * error; undefined where it diverges or leaves the range of doubles.
  *
  * The band is split at the cutoff. Below it 1/(1 + u^(2n)) is near 1, above it is u^(−2n)/(1 + u^(−2n)), which is the
  * same integral in 1/u; see {@link saturatingPart}. Each part is taken relative to the integrand at the edge that holds
  * most of it, so deep stop bands, steep exponents and far edges neither overflow nor lose digits.
  */
-export function saturatingIntegral(term: PowerLawTerm, gain: Saturation, from: number, to: number): BoundedValue {
+export function saturatingIntegral(
+  term: PowerLawTerm,
+  gain: Saturation,
+  from: number,
+  to: number,
+): BoundedValue | undefined {
   if (term.level === 0) return { value: 0, error: 0 };
   const { cutoff, order, numeratorOrder } = gain;
   // Exact where they nearly vanish, which is where the width multiplies what they lost.
@@ -29,7 +33,7 @@ export function saturatingIntegral(term: PowerLawTerm, gain: Saturation, from: n
   let value = 0;
   let error = 0;
   if (from < cutoff) {
-    if (from === 0 && rise <= 0) return infinity;
+    if (from === 0 && rise <= 0) return undefined;
     const high = Math.min(to, cutoff);
     const part = partOf(rise, order, high / cutoff, from === 0 ? Number.POSITIVE_INFINITY : logRatio(from, high));
     const edge = rise >= 0 ? high : from;
@@ -38,7 +42,7 @@ export function saturatingIntegral(term: PowerLawTerm, gain: Saturation, from: n
     error += size.value * part.error + size.error * part.value;
   }
   if (to > cutoff) {
-    if (to === Number.POSITIVE_INFINITY && fall <= 0) return infinity;
+    if (to === Number.POSITIVE_INFINITY && fall <= 0) return undefined;
     const low = Math.max(from, cutoff);
     const part = partOf(fall, order, cutoff / low, to === Number.POSITIVE_INFINITY ? to : logRatio(low, to));
     const edge = fall >= 0 ? low : to;
@@ -46,7 +50,7 @@ export function saturatingIntegral(term: PowerLawTerm, gain: Saturation, from: n
     value += size.value * part.value;
     error += size.value * part.error + size.error * part.value;
   }
-  return { value, error };
+  return regular(value) ? { value, error } : undefined;
 }
 
 function partOf(lead: number, order: number, u: number, width: number): BoundedValue {
@@ -75,14 +79,4 @@ function sizeAt({ at, level, exponent }: PowerLawTerm, x: number, u: number, cou
 
 function regular(size: number): boolean {
   return size > 1e-290 && size < 1e290;
-}
-
-function wholePower(base: number, exponent: number): number {
-  let power = 1;
-  let square = base;
-  for (let left = exponent; left > 0; left = Math.floor(left / 2)) {
-    if (left % 2 === 1) power *= square;
-    square *= square;
-  }
-  return power;
 }

@@ -57,7 +57,7 @@ function byMoments(p: number, q: number, top: number, width: number): BoundedVal
       part = scale * (high - low);
       roundings += (k + 10) * Math.abs(scale) * (high + low);
     } else {
-      part = weight * low * (order === 0 ? width : Math.expm1(reach) / order);
+      part = weight * low * (Math.abs(reach) < 1e-30 ? width : Math.expm1(reach) / order);
       roundings += (k + 10) * Math.abs(part);
     }
     value += part;
