@@ -88,7 +88,8 @@ function knotsOf(re: number, im: number, rate: number): number[] {
   const centre = (Math.abs(Math.atan2(im, re)) / Math.PI) * half;
   const halfWidth = (-Math.log(Math.hypot(re, im)) / Math.PI) * half;
   const knots = [centre];
-  for (let away = halfWidth; away < half; away *= 3) knots.push(centre - away, centre + away);
+  // A pole a rounding away from the circle, or one of a cluster, may be found on it.
+  for (let away = Math.max(halfWidth, 1e-9 * half); away < half; away *= 3) knots.push(centre - away, centre + away);
   const inside = knots.filter((hz) => hz > 0 && hz < half);
   return [...inside, ...inside.map((hz) => rate - hz), half, rate];
 }

@@ -192,7 +192,7 @@ export const cases: Readonly<Record<string, Case>> = {
 };
 
 /** Cascades of everything that has a form of its own. */
-export const cascades: readonly Weighting[] = [
+const cascades: readonly Weighting[] = [
   core.cascade(core.firstOrderLowPass(byCutoff), core.firstOrderHighPass({ cutoffHz: 2 }), core.gain({ factor: 0.1 })),
   core.cascade(core.movingAverage(bySeconds), core.butterworthLowPass({ order: 2, cutoffHz: 400 })),
   core.cascade(core.sincDecimator(decimator), core.firFilter({ taps: [0.25, 0.5, 0.25], sampleRateHz: 1e6 / 64 })),

@@ -66,6 +66,17 @@ describe("a recursive filter", () => {
     expectRelative(noiseBandwidth(average).hz, (0.5 * slow) / (2 - slow), 1e-13);
   });
 
+  test("with a pole an ulp inside the unit circle, or a cluster beside it, still has knots", () => {
+    const beside = iirFilter({ numerator: [1], denominator: [1, Number.EPSILON / 2 - 1], sampleRateHz: 1 });
+    expect(beside.knots.length).toBeGreaterThan(10);
+    const cluster = iirFilter({
+      numerator: [1],
+      denominator: [1, -3.96, 5.8806, -3.881196, 0.96059601],
+      sampleRateHz: 1,
+    });
+    expect(cluster.knots.every((hz) => hz > 0 && hz <= 1)).toBe(true);
+  });
+
   test("is refused with a pole a hair outside the unit circle, taken with one a hair inside", () => {
     const given = (pole: number): (() => unknown) => {
       return () => iirFilter({ numerator: [1], denominator: [1, -pole], sampleRateHz: 1 });
