@@ -1,12 +1,6 @@
-import {
-  type BandNoise,
-  bandNoise,
-  NoiseError,
-  OutOfDomainError,
-  type Spectrum,
-  type Weighting,
-} from "@quietband/core";
+import { type BandNoise, NoiseError, OutOfDomainError, type Weighting } from "@quietband/core";
 import { refuseUnknownKeys, requireFinite, requireNotNegative, shown } from "../convert/domain.js";
+import { type BandMeter, bandMeter } from "./band-meter.js";
 import type { BudgetSource } from "./budget-options.js";
 import type { NamedSpectrum } from "./named-spectrum.js";
 import { isSpectrum, type NoiseSource } from "./noise-source.js";
@@ -83,13 +77,11 @@ export function budgetLines(
   return { lines, unit: unit ?? "V" };
 }
 
-type Meter = (spectrum: Spectrum, weighting: Weighting | undefined) => BandNoise;
-
 function lineOf(
   given: BudgetSource,
   name: string,
   context: LinesContext,
-  { measure, weighting }: { readonly measure: Meter; readonly weighting: Weighting | undefined },
+  { measure, weighting }: { readonly measure: BandMeter; readonly weighting: Weighting | undefined },
 ): BudgetLine {
   const { source, gain: ownGain = 1, enters = "input", standardUncertainty, partFactor } = given;
   requireFinite("gain", ownGain);
@@ -132,20 +124,6 @@ function bandNotes({ band }: StatedNoise, { fromHz, toHz }: LinesContext): strin
   if (band === undefined) return ["No band is stated for it; it is taken to be the budget's."];
   if (band[0] === fromHz && band[1] === toHz) return [];
   return [`It is stated for ${bandWords(band)}; the budget's band is ${bandWords([fromHz, toHz])}.`];
-}
-
-/** Band noise that measures one spectrum behind one weighting once: many parts of a kind cost one integral. */
-function bandMeter(fromHz: number, toHz: number): Meter {
-  const known = new Map<Weighting | undefined, Map<Spectrum, BandNoise>>();
-  return (spectrum, weighting) => {
-    const behind = known.get(weighting) ?? new Map<Spectrum, BandNoise>();
-    known.set(weighting, behind);
-    const before = behind.get(spectrum);
-    if (before !== undefined) return before;
-    const found = bandNoise(spectrum, { fromHz, toHz, weighting });
-    behind.set(spectrum, found);
-    return found;
-  };
 }
 
 /** Own filter, then the stages on the way out. Sources that enter at one place without a filter of their own share one. */
