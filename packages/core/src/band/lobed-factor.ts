@@ -20,10 +20,10 @@ export function lobedFactor(lobes: LobedGain): LobedFactor {
 /** The gain with its waves averaged away, at one frequency. */
 export function meanGainAt(lobes: LobedGain, hz: number): number {
   let mean = 0;
-  for (const { envelopeAt, waves } of lobes.parts) {
+  for (const part of lobes.parts) {
     let steady = 0;
-    for (const { seconds, cosine } of waves) if (seconds === 0) steady += cosine;
-    mean += envelopeAt(hz) * steady;
+    for (const { seconds, cosine } of part.waves) if (seconds === 0) steady += cosine;
+    mean += part.envelopeAt(hz) * steady;
   }
   return mean * lobes.smoothAt(hz);
 }

@@ -50,7 +50,7 @@ export function chooseModel(
   trust?: Float64Array,
 ): { readonly chosen: Tried; readonly alternatives: readonly FitAlternative[] } {
   const trial = (name: FitModelName): Tried => tryModel(name, exponent, points, trust);
-  const single = [trial("floor"), trial("flicker")];
+  const single: readonly [Tried, Tried] = [trial("floor"), trial("flicker")];
   const double = [trial("floorAndFlicker")];
   const triple =
     points.x.length >= 8
@@ -63,7 +63,7 @@ export function chooseModel(
     among
       .filter(({ unsupported }) => unsupported === undefined)
       .toSorted((one, other) => criterion(one) - criterion(other))[0];
-  let chosen = best(single) ?? (single[0] as Tried);
+  let chosen = best(single) ?? single[0];
   for (const step of [double, triple]) {
     const richer = best(step);
     if (richer !== undefined && criterion(richer) < criterion(chosen) - extraTermMargin) chosen = richer;

@@ -98,10 +98,8 @@ export function fitCurve(curve: Curve, options: FitOptions = {}): FittedCurve {
     fitDefaults,
     options,
   );
-  if (!modelNames.includes(model ?? ""))
-    throw new OutOfDomainError(`model must be one of ${modelNames.join(", ")}; got ${String(model)}.`);
-  if (misreadings !== "report" && misreadings !== "downweight")
-    throw new OutOfDomainError(`misreadings must be 'report' or 'downweight'; got ${String(misreadings)}.`);
+  requireOneOf("model", modelNames, model);
+  requireOneOf("misreadings", ["report", "downweight"], misreadings);
   const resolved = resolveExponent(exponent);
   const points = choosePoints(curve, fromHz ?? 0, toHz ?? Number.POSITIVE_INFINITY);
   const suspected = findMisreadings(resolved, points);
@@ -139,6 +137,11 @@ export function fitCurve(curve: Curve, options: FitOptions = {}): FittedCurve {
     findings: Object.freeze(findings),
     notes: Object.freeze([...(spectrum.notes ?? []), ...findings.map(({ message }) => message)]),
   });
+}
+
+function requireOneOf(name: string, known: readonly string[], value: string | undefined): void {
+  if (known.includes(value ?? "")) return;
+  throw new OutOfDomainError(`${name} must be one of ${known.join(", ")}; got ${String(value)}.`);
 }
 
 function trustWithout(points: FitPoints, suspected: readonly { readonly index: number }[]): Float64Array {

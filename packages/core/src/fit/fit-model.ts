@@ -52,6 +52,19 @@ export function fitModel(name: FitModelName, exponent: ResolvedExponent): FitMod
         return -exponentOf(p) * x;
       },
     };
+  if (extra === parameters.length)
+    return {
+      ...base,
+      // one term beside the floor: the path that nearly every fit takes
+      shapeAt(x, p, slopes) {
+        const steepness = exponentOf(p);
+        const distance = (p[0] as number) - x;
+        const share = 1 / (1 + Math.exp(-steepness * distance));
+        slopes[0] = steepness * share;
+        if (exponentAt >= 0) slopes[exponentAt] = distance * share;
+        return softplus(steepness * distance);
+      },
+    };
   const terms: ShapeTerm[] = [cornerTerm(exponentAt, exponentOf), ...extraTerms(name, extra)];
   return {
     ...base,

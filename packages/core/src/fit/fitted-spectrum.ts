@@ -32,12 +32,7 @@ export function fittedSpectrum(
   });
   const sides = { below: sideOf(beyond, "below"), above: sideOf(beyond, "above") };
   const notes: string[] = [];
-  const sensitivities: Sensitivity[] = [];
-  if (covariance !== undefined) sensitivities.push(parameterSensitivity(fit, covariance, [first, last], sides));
-  if (curve.commonUncertainty > 0) sensitivities.push(commonSensitivity("axis", curve.commonUncertainty));
-  if (covariance !== undefined) sensitivities.push(...sharedSensitivities(curve, points, fit, [first, last], sides));
-  const valueAt = (hz: number): number =>
-    termsAt(terms, hz) + (trap === undefined ? 0 : trap.level / (1 + (hz / trap.cornerHz) ** 2));
+  const sensitivities = parameterSensitivities(curve, points, fit, covariance, sides);
   const pieces: PowerLawPiece[] = [{ from: first, to: last, terms: copied(terms) }];
   for (const side of ["below", "above"] as const) {
     const own = law[side];
@@ -45,7 +40,8 @@ export function fittedSpectrum(
     const edge = side === "below" ? first : last;
     notes.push(sides[side] === "segments" ? formulaNote(side, edge) : beyondNote(side, edge, own));
     if (own.standardUncertainty > 0) sensitivities.push(exponentSensitivity(side, edge, own.standardUncertainty));
-    const goingOn = sides[side] === "segments" ? copied(terms) : [lawFrom(edge, valueAt(edge), own)];
+    const goingOn =
+      sides[side] === "segments" ? copied(terms) : [lawFrom(edge, termsAt(terms, edge) + trapAt(trap, edge), own)];
     if (side === "below") pieces.unshift({ from: 0, to: edge, terms: goingOn });
     else pieces.push({ from: edge, to: Number.POSITIVE_INFINITY, terms: goingOn });
   }
@@ -58,6 +54,28 @@ export function fittedSpectrum(
   return withTrap(curve.unit, pieces, trap, extras);
 }
 
+function trapAt(trap: { readonly level: number; readonly cornerHz: number } | undefined, hz: number): number {
+  return trap === undefined ? 0 : trap.level / (1 + (hz / trap.cornerHz) ** 2);
+}
+
+/** The fit's own parameters, an error of the axis, and errors that points share. */
+function parameterSensitivities(
+  curve: Curve,
+  points: FitPoints,
+  fit: RefinedFit,
+  covariance: readonly (readonly number[])[] | undefined,
+  sides: Sides,
+): Sensitivity[] {
+  const axis = curve.commonUncertainty > 0 ? [commonSensitivity("axis", curve.commonUncertainty)] : [];
+  if (covariance === undefined) return axis;
+  const span = [points.points[0]?.frequency ?? 1, points.points.at(-1)?.frequency ?? 1] as const;
+  return [
+    parameterSensitivity(fit, covariance, span, sides),
+    ...axis,
+    ...sharedSensitivities(curve, points, fit, span, sides),
+  ];
+}
+
 /** A Lorentzian beside the power laws: where the model itself holds, and nothing where another law took over. */
 function withTrap(
   unit: string,
@@ -66,7 +84,7 @@ function withTrap(
   extras: Extras,
 ): Spectrum {
   const smooth = spectrumFromPieces(unit, pieces);
-  const lorentzian = functionSpectrum((hz) => trap.level / (1 + (hz / trap.cornerHz) ** 2), {
+  const lorentzian = functionSpectrum((hz) => trapAt(trap, hz), {
     unit,
     support: smooth.support,
     knots: [trap.cornerHz],

@@ -51,7 +51,9 @@ function worstPoint(
   let best: { readonly index: number; readonly fit: RefinedFit } | undefined;
   for (const name of names) {
     const model = fitModel(name, exponent);
-    const whole = refine(model, points, startsFor(model, points), trust);
+    const whole = refine(model, points, startsFor(model, points).slice(0, 1), trust);
+    // a fit is pulled by at most two thirds of a lone misreading; nothing near that is nothing gross
+    if (whole.residuals.every((value, i) => Math.abs(value) < leastFactor / 3 || trust[i] === 0)) continue;
     for (const index of suspects(whole, points, trust)) {
       const without = trust.slice();
       without[index] = 0;
@@ -83,11 +85,11 @@ function worstPoint(
   };
 }
 
-/** The half of the points with the largest residuals: a misreading pulls the fit, but not below the middle. */
+/** The points with the largest residuals: a misreading pulls the fit, but not that far. */
 function suspects({ residuals }: RefinedFit, { weight }: FitPoints, trust: Float64Array): readonly number[] {
   return Array.from(residuals, (value, index) => ({ index, size: Math.abs(value) * (weight[index] as number) }))
     .filter(({ index }) => (trust[index] as number) > 0)
     .toSorted((one, other) => other.size - one.size)
-    .slice(0, Math.ceil(residuals.length / 2))
+    .slice(0, 5)
     .map(({ index }) => index);
 }

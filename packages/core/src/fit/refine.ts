@@ -3,6 +3,9 @@ import { linearLeastSquares } from "../numerics/linear-least-squares.js";
 import type { FitModel } from "./fit-model.js";
 import type { FitPoints } from "./fit-points.js";
 
+/** Statistics need no more; polishing steps find the last digits where there is a minimum. */
+const solverOptions = Object.freeze({ mostSteps: 80, stallTolerance: 1e-12, mostStalled: 3 });
+
 /** A model with its best parameters. */
 export interface RefinedFit {
   readonly model: FitModel;
@@ -42,7 +45,7 @@ export function refine(
     | { readonly parameters: Float64Array; readonly sumOfSquares: number; readonly converged: boolean }
     | undefined;
   for (const start of starts) {
-    const found = dampedLeastSquares(projected, start, rows, { mostSteps: 200 });
+    const found = dampedLeastSquares(projected, start, rows, solverOptions);
     if (best === undefined || found.sumOfSquares < best.sumOfSquares) best = found;
   }
   return assembled(model, given, best?.parameters ?? new Float64Array(size), best?.converged ?? false);

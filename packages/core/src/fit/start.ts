@@ -21,7 +21,7 @@ export function startsFor(model: FitModel, points: FitPoints): readonly (readonl
   const candidates: number[][] = [];
   for (const corner of corners)
     for (const exponent of exponents)
-      for (const inner of [0.25, 0.5, 0.75])
+      for (const inner of model.parameters.includes("ln trap corner") ? [0.25, 0.5, 0.75] : [0.5])
         candidates.push(
           model.parameters.map((name) =>
             startOf(name, { corner, exponent, inner: low + inner * (high - low), low, high }),

@@ -7,6 +7,10 @@ export interface DampedOptions {
   /** Stops when a step changes every parameter by less than this, relative to its size (or to 1e-30). */
   readonly stepTolerance: number;
   readonly mostSteps: number;
+  /** A step that lowers the sum of squares by less than this share has stalled. */
+  readonly stallTolerance: number;
+  /** Stops after so many stalled steps in a row. */
+  readonly mostStalled: number;
 }
 
 /** Where a fit ended. */
@@ -20,7 +24,12 @@ export interface DampedResult {
   readonly inverse: Float64Array | undefined;
 }
 
-export const dampedDefaults: DampedOptions = Object.freeze({ stepTolerance: 1e-11, mostSteps: 1000 });
+export const dampedDefaults: DampedOptions = Object.freeze({
+  stepTolerance: 1e-11,
+  mostSteps: 1000,
+  stallTolerance: 2e-16,
+  mostStalled: 25,
+});
 
 /**
  * Least squares by Levenberg's and Marquardt's damped steps with column scaling and Nielsen's rule for the damping (Madsen,
@@ -33,7 +42,7 @@ export function dampedLeastSquares(
   count: number,
   options: Partial<DampedOptions> = {},
 ): DampedResult {
-  const { stepTolerance, mostSteps } = { ...dampedDefaults, ...options };
+  const { stepTolerance, mostSteps, stallTolerance, mostStalled } = { ...dampedDefaults, ...options };
   const size = start.length;
   const work = {
     residuals: new Float64Array(count),
@@ -45,7 +54,7 @@ export function dampedLeastSquares(
   residualsAt(parameters, work.residuals, work.jacobian);
   let best = squared(work.residuals);
   const scale = new Float64Array(size);
-  let damping = 1e-3;
+  let damping = 100;
   let growth = 2;
   let converged = false;
   let stalled = 0;
@@ -70,9 +79,9 @@ export function dampedLeastSquares(
       best = found;
       [work.residuals, work.trialResiduals] = [work.trialResiduals, work.residuals];
       [work.jacobian, work.trialJacobian] = [work.trialJacobian, work.jacobian];
-      stalled = gain <= 2e-16 * best ? stalled + 1 : 0;
+      stalled = gain <= stallTolerance * best ? stalled + 1 : 0;
       // a small step counts only where damping is not what makes it small
-      converged = best === 0 || (small && damping < 1) || stalled >= 25;
+      converged = best === 0 || (small && damping < 1) || stalled >= mostStalled;
     } else {
       // nothing lower in any direction, to the last digit
       converged = small && damping > 1e8;
@@ -103,7 +112,7 @@ function polished(
 ): Float64Array {
   let parameters = start;
   let shortest = Number.POSITIVE_INFINITY;
-  for (let count = 0; count < 100; count += 1) {
+  for (let count = 0; count < 40; count += 1) {
     residualsAt(parameters, work.residuals, work.jacobian);
     const step = solveDamped(work.jacobian, work.residuals, scale, 0);
     if (step === undefined) return parameters;

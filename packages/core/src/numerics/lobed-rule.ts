@@ -152,12 +152,12 @@ function wavePanel(gain: LobedFactor, [low, high]: readonly [number, number], ta
   const nodes = Float64Array.from(rule.nodes, (node) => centre + half * node);
   const weights = new Float64Array(nodesPerPanel);
   const doubt = new Float64Array(nodesPerPanel);
-  for (const { envelopeAt, waves } of gain.parts) {
+  for (const part of gain.parts) {
     const kernel = new Float64Array(nodesPerPanel);
-    addWaveWeights(kernel, waves, [low, high], table);
-    const size = waves.reduce((sum, { cosine, sine }) => sum + Math.hypot(cosine, sine), 0);
+    addWaveWeights(kernel, part.waves, [low, high], table);
+    const size = part.waves.reduce((sum, { cosine, sine }) => sum + Math.hypot(cosine, sine), 0);
     for (let k = 0; k < nodesPerPanel; k += 1) {
-      const envelope = envelopeAt(nodes[k] as number);
+      const envelope = part.envelopeAt(nodes[k] as number);
       weights[k] = (weights[k] as number) + (kernel[k] as number) * envelope;
       // the highest Legendre coefficients of g·envelope tell what is left unresolved
       const top = (polynomials[k] as Float64Array)[nodesPerPanel - 1] as number;
