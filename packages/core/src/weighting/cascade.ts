@@ -44,7 +44,7 @@ function inRow(one: Weighting, other: Weighting): Weighting {
   const repeatsHz = repeatsTogether(one, other);
   const factors = [...(one.factors ?? [one]), ...(other.factors ?? [other])];
   return makeWeighting({
-    name: `${one.name}, ${other.name}`,
+    name: `${one.name}; ${other.name}`,
     support,
     knots: [...one.knots, ...other.knots],
     lowExponent: one.lowExponent + other.lowExponent,

@@ -1,11 +1,11 @@
 import { OutOfDomainError } from "../ground/errors.js";
 import type { ComplexHz } from "./weighting.js";
 
-/** |jf − p|²/|p|² of a real place, or |jf − p|²|jf − p̄|²/|p|⁴ of a pair; of places on 0 Hz without the division. */
+/** |jf − p|²/|p|² of a real place, or |jf − p|²|jf − p̄|²/|p|⁴ of a pair. */
 export type PlaceFactor = (hz: number) => number;
 
 /**
- * The factors of |H|² that places in Hz stand for, complex ones taken with their conjugates. The difference of squares in a pair
+ * The factors of |H|² that places in Hz, none of them 0, stand for; complex ones taken with their conjugates. The difference of squares in a pair
  * is formed by its factors, so that sharp resonances and notches keep their digits.
  */
 export function placeFactors(what: string, places: readonly ComplexHz[]): PlaceFactor[] {
@@ -30,7 +30,6 @@ export function placeFactors(what: string, places: readonly ComplexHz[]): PlaceF
 }
 
 function realFactor(re: number): PlaceFactor {
-  if (re === 0) return (hz) => hz * hz;
   return (hz) => {
     const u = hz / re;
     return 1 + u * u;

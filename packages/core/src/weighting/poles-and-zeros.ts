@@ -72,7 +72,7 @@ export function polesAndZeros(options: PolesAndZerosOptions): Weighting {
       `atHz must be a frequency in Hz where the filter has a gain; at ${atHz} Hz it has none.`,
     );
   return makeWeighting({
-    name: `${poles.length} poles, ${placed.length + given.zerosAtOrigin} zeros, ${inName(powerGain)} at ${inName(atHz)} Hz`,
+    name: `poles and zeros (${poles.length} and ${placed.length + given.zerosAtOrigin}), power gain ${inName(powerGain)} at ${inName(atHz)} Hz`,
     knots: [...poles, ...zeros].flatMap(knotsOf),
     lowExponent: -2 * zerosAtOrigin,
     highExponent: 2 * (poles.length - zeros.length - zerosAtOrigin),
