@@ -1,4 +1,10 @@
 export { type AmplifierStage, amplifierStage } from "./chain/amplifier-stage.js";
+export {
+  type AveragedNoise,
+  type AveragingLimit,
+  type AveragingLimitOptions,
+  averagingLimit,
+} from "./chain/averaging-limit.js";
 export type {
   BudgetCorrelation,
   BudgetSource,
@@ -7,10 +13,26 @@ export type {
   NoiseBudgetOptions,
 } from "./chain/budget-options.js";
 export type { BudgetPeakToPeak, BudgetShare, BudgetTargetAnswer, NoiseBudget } from "./chain/budget-result.js";
+export {
+  type CandidateParts,
+  type CompareAgainstResistanceOptions,
+  compareAgainstResistance,
+  type ResistanceComparison,
+  type ResistanceRow,
+} from "./chain/compare-against-resistance.js";
+export {
+  type Candidate,
+  type CandidateRow,
+  type CompareCurvesOptions,
+  type ComparisonPath,
+  type CurveComparison,
+  compareCurves,
+} from "./chain/compare-curves.js";
 export { type NamedSpectrum, namedSpectrum } from "./chain/named-spectrum.js";
 export { type NoiseAcrossOptions, noiseAcross } from "./chain/noise-across.js";
 export { noiseBudget } from "./chain/noise-budget.js";
 export type { NoiseSource } from "./chain/noise-source.js";
+export { type ObservationNoiseOptions, type ObservedNoise, observationNoise } from "./chain/observation-noise.js";
 export { parallelParts } from "./chain/parallel-parts.js";
 export { type QuantizationNoise, type QuantizationOptions, quantization } from "./chain/quantization.js";
 export { type RatiometricPaths, ratiometricRemainder } from "./chain/ratiometric-remainder.js";
@@ -28,6 +50,39 @@ export { type StatedNoise, type StatedNoiseOptions, statedNoise } from "./chain/
 export type { Temperature } from "./chain/temperature.js";
 export { type ThermalNoiseOptions, thermalNoise } from "./chain/thermal-noise.js";
 export { type RippleShape, type Tone, type ToneOptions, tone } from "./chain/tone.js";
+export { amplitudeRatioDb, amplitudeRatioFromDb } from "./convert/amplitude-ratio-db.js";
+export { type ConverterFigures, type ConverterFiguresOptions, converterFigures } from "./convert/converter-figures.js";
+export { crestFactor, crestFactorFor } from "./convert/crest-factor.js";
+export {
+  type ConverterScale,
+  idealConverterSnrDb,
+  leastSignificantBit,
+  quantizationNoiseRms,
+} from "./convert/ideal-converter.js";
+export {
+  densityDbfsPerHz,
+  type FullScale,
+  levelDbFullScaleAmplitude,
+  levelDbfs,
+  rmsFromDbfs,
+} from "./convert/level-dbfs.js";
+export { type LevelLoad, levelDbm, rmsFromDbm } from "./convert/level-dbm.js";
+export { levelDbu, rmsFromDbu } from "./convert/level-dbu.js";
+export { levelDbv, rmsFromDbv } from "./convert/level-dbv.js";
+export { type PeakToPeak, type PeakToPeakConvention, peakToPeak } from "./convert/peak-to-peak.js";
+export { type GaussianShare, peakToPeakFactorFor } from "./convert/peak-to-peak-factor-for.js";
+export { powerRatioDb, powerRatioFromDb } from "./convert/power-ratio-db.js";
+export { type RangeOfNormals, rangeOfNormals } from "./convert/range-of-normals.js";
+export { type ReferenceLimit, referenceLimitedSnrDb } from "./convert/reference-limited-snr-db.js";
+export type { Rms } from "./convert/rms.js";
+export {
+  type RmsForBitsOptions,
+  rmsForEffectiveBits,
+  rmsForEffectiveResolution,
+  rmsForNoiseFreeBits,
+} from "./convert/rms-for-bits.js";
+export { rmsFromPeakToPeak } from "./convert/rms-from-peak-to-peak.js";
+export { shareOutside } from "./convert/share-outside.js";
 export { csvTable } from "./show/csv-table.js";
 export type { DensityInterval, DensityModel, DensityPlotOptions } from "./show/density-options.js";
 export { densityPlot } from "./show/density-plot.js";
