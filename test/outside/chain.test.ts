@@ -1,5 +1,13 @@
 import { bandNoise, firstOrderLowPass, powerLaws, whiteFlicker } from "@quietband/core";
-import { amplifierStage, noiseAcross, noiseBudget, quantization, shotNoise, thermalNoise } from "@quietband/figures";
+import {
+  amplifierStage,
+  averagingLimit,
+  noiseAcross,
+  noiseBudget,
+  quantization,
+  shotNoise,
+  thermalNoise,
+} from "@quietband/figures";
 import { describe, expect, test } from "vitest";
 import { published } from "../support/published.js";
 import { expectRelative } from "../support/relative.js";
@@ -116,4 +124,16 @@ test("kT/C does not know the resistor, in a budget either (Nyquist 1928)", () =>
     toHz: infinity,
   });
   expectRelative(budget.power, (1.380649e-23 * 300) / 1e-12, 1e-13);
+});
+
+// Source: W. J. Riley, NIST Special Publication 1065 (2008), section 7.1; a stored copy (fixtures/published/allan_power_law.json).
+test("two-sample variances of white, 1/f and random-walk noise are h₀/(2τ), 2 ln 2 · h₋₁ and (2π²/3)τ · h₋₂", () => {
+  const rows = published<{ readonly alpha: number; readonly coefficient?: number }>("allan_power_law").values;
+  const slopes = rows.filter(({ alpha }) => alpha <= 0);
+  expect(slopes).toHaveLength(3);
+  for (const { alpha, coefficient = Number.NaN } of slopes) {
+    const spectrum = powerLaws([{ coefficient: 1e-12, exponent: -alpha }]);
+    for (const { seconds, deviation } of averagingLimit(spectrum, { seconds: [0.01, 3, 1000] }).rows)
+      expectRelative(deviation ** 2, 1e-12 * coefficient * seconds ** (-alpha - 1), 1e-12);
+  }
 });

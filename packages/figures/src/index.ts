@@ -83,6 +83,8 @@ export {
 } from "./convert/rms-for-bits.js";
 export { rmsFromPeakToPeak } from "./convert/rms-from-peak-to-peak.js";
 export { shareOutside } from "./convert/share-outside.js";
+export { type CheckOptions, checkStatedFigure, type StatedFigureCheck } from "./judge/check-stated-figure.js";
+export { readStatedFigure, type StatedFigure } from "./judge/read-stated-figure.js";
 export { csvTable } from "./show/csv-table.js";
 export type { DensityInterval, DensityModel, DensityPlotOptions } from "./show/density-options.js";
 export { densityPlot } from "./show/density-plot.js";

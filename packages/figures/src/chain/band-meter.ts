@@ -55,7 +55,7 @@ function meterBehind(weighting: Weighting | undefined, fromHz: number, toHz: num
 }
 
 /** The terms of a model that is one sum of power laws at all frequencies and carries nothing else. */
-function plainTerms({ pieces, pointsSpan, sensitivities }: Spectrum): readonly PowerLawTerm[] | undefined {
+export function plainTerms({ pieces, pointsSpan, sensitivities }: Spectrum): readonly PowerLawTerm[] | undefined {
   const [piece, ...others] = pieces ?? [];
   if (piece === undefined || others.length > 0 || pointsSpan !== undefined || sensitivities !== undefined)
     return undefined;

@@ -1,7 +1,9 @@
 import { bandNoise, firstOrderLowPass, noiseBandwidth, powerLaws, whiteFlicker } from "@quietband/core";
-import { type AmplifierStage, type AmplifierStageOptions, amplifierStage, noiseBudget } from "@quietband/figures";
 import { describe, expect, test } from "vitest";
 import { expectRelative } from "../../../../test/support/relative.js";
+import { type AmplifierStage, amplifierStage } from "../../src/chain/amplifier-stage.js";
+import { noiseBudget } from "../../src/chain/noise-budget.js";
+import type { AmplifierStageOptions } from "../../src/chain/stage-network.js";
 
 const voltageNoise = whiteFlicker({ floor: 10e-9, cornerHz: 0 });
 const currentNoise = powerLaws([{ coefficient: 1e-24, exponent: 0 }], { unit: "A" });

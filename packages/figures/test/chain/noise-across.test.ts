@@ -1,7 +1,9 @@
 import { OutOfDomainError } from "@quietband/core";
-import { noiseAcross, shotNoise, thermalNoise } from "@quietband/figures";
 import { expect, test } from "vitest";
 import { expectRelative } from "../../../../test/support/relative.js";
+import { noiseAcross } from "../../src/chain/noise-across.js";
+import { shotNoise } from "../../src/chain/shot-noise.js";
+import { thermalNoise } from "../../src/chain/thermal-noise.js";
 
 test("shot noise of 50 mV across a resistor equals its thermal noise: 2qI·R² = 4kTR at I·R = 2kT/q", () => {
   const kelvin = 300;

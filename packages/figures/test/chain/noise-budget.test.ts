@@ -11,18 +11,16 @@ import {
   scaleSpectrum,
   whiteFlicker,
 } from "@quietband/core";
-import {
-  type BudgetSource,
-  type NoiseBudget,
-  noiseBudget,
-  quantization,
-  statedNoise,
-  thermalNoise,
-  tone,
-} from "@quietband/figures";
 import fc from "fast-check";
 import { describe, expect, test } from "vitest";
 import { expectRelative } from "../../../../test/support/relative.js";
+import type { BudgetSource } from "../../src/chain/budget-options.js";
+import type { NoiseBudget } from "../../src/chain/budget-result.js";
+import { noiseBudget } from "../../src/chain/noise-budget.js";
+import { quantization } from "../../src/chain/quantization.js";
+import { statedNoise } from "../../src/chain/stated-noise.js";
+import { thermalNoise } from "../../src/chain/thermal-noise.js";
+import { tone } from "../../src/chain/tone.js";
 import { demoPaths, demoTruth } from "./support/demo-truth.js";
 
 const band = { fromHz: 0.1, toHz: 10 } as const;

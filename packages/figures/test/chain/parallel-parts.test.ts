@@ -1,7 +1,8 @@
 import { bandNoise, curveFromPoints, OutOfDomainError, polyline } from "@quietband/core";
-import { namedSpectrum, parallelParts } from "@quietband/figures";
 import { expect, test } from "vitest";
 import { expectRelative } from "../../../../test/support/relative.js";
+import { namedSpectrum } from "../../src/chain/named-spectrum.js";
+import { parallelParts } from "../../src/chain/parallel-parts.js";
 
 const points = [1, 100].map((frequency) => ({ frequency, density: 1e-6 }));
 const part = namedSpectrum(polyline(curveFromPoints(points, { unit: "V", pointUncertainty: 0.1 })), "reference");

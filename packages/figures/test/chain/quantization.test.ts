@@ -1,8 +1,8 @@
 import { bandNoise, OutOfDomainError, sumSpectra, toneSkirt, whiteFlicker } from "@quietband/core";
-import { quantization } from "@quietband/figures";
 import { expect, test } from "vitest";
 import { normalFrom, uniformFrom } from "../../../../test/support/random.js";
 import { expectRelative } from "../../../../test/support/relative.js";
+import { quantization } from "../../src/chain/quantization.js";
 
 const rounding = quantization({ lsb: 3e-6, sampleRateHz: 2000 });
 

@@ -8,9 +8,10 @@ import {
   secondOrderLowPass,
   whiteFlicker,
 } from "@quietband/core";
-import { ratiometricRemainder, referencePathNoise } from "@quietband/figures";
 import { describe, expect, test } from "vitest";
 import { expectRelative } from "../../../../test/support/relative.js";
+import { ratiometricRemainder } from "../../src/chain/ratiometric-remainder.js";
+import { referencePathNoise } from "../../src/chain/reference-path-noise.js";
 
 const excitation = whiteFlicker({ floor: 380e-9, cornerHz: 22 });
 const path = {

@@ -1,7 +1,8 @@
 import { whiteFlicker } from "@quietband/core";
-import { referenceNoiseByUse, referencePathNoise } from "@quietband/figures";
 import { expect, test } from "vitest";
 import { expectRelative } from "../../../../test/support/relative.js";
+import { referenceNoiseByUse } from "../../src/chain/reference-noise-by-use.js";
+import { referencePathNoise } from "../../src/chain/reference-path-noise.js";
 
 const path = { spectrum: whiteFlicker({ floor: 100e-9, cornerHz: 0 }), referenceVolts: 2.5, fromHz: 0, toHz: 10e3 };
 

@@ -12,11 +12,14 @@ import {
   sumSpectra,
   whiteFlicker,
 } from "@quietband/core";
-import { noiseBudget, quantization, type ReferencePathOptions, referencePathNoise } from "@quietband/figures";
 import { describe, expect, test } from "vitest";
 import { normalFrom, uniformFrom } from "../../../../test/support/random.js";
 import { expectRelative } from "../../../../test/support/relative.js";
 import { edgeOf, type ReferenceSpectrum, referenceCases, spectrumOf } from "../../../../test/support/vectors.js";
+import { noiseBudget } from "../../src/chain/noise-budget.js";
+import { quantization } from "../../src/chain/quantization.js";
+import { referencePathNoise } from "../../src/chain/reference-path-noise.js";
+import type { ReferencePathOptions } from "../../src/chain/reference-path-options.js";
 import { demoPaths, demoTruth } from "./support/demo-truth.js";
 
 // 10 µV RMS from 0 to 10 kHz at 2.5 V.

@@ -1,7 +1,7 @@
 import { bandNoise, OutOfDomainError } from "@quietband/core";
-import { resistorExcessNoise } from "@quietband/figures";
 import { expect, test } from "vitest";
 import { expectRelative } from "../../../../test/support/relative.js";
+import { resistorExcessNoise } from "../../src/chain/resistor-excess-noise.js";
 
 test("0 dB is 1 µV RMS a decade for each volt, in any decade", () => {
   const excess = resistorExcessNoise({ volts: 3, noiseIndexDb: 0 });

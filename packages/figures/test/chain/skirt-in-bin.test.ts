@@ -1,7 +1,8 @@
 import { whiteFlicker } from "@quietband/core";
-import { referencePathNoise, skirtInBin } from "@quietband/figures";
 import { expect, test } from "vitest";
 import { expectRelative } from "../../../../test/support/relative.js";
+import { referencePathNoise } from "../../src/chain/reference-path-noise.js";
+import { skirtInBin } from "../../src/chain/skirt-in-bin.js";
 
 const base = {
   spectrum: whiteFlicker({ floor: 100e-9, cornerHz: 20 }),

@@ -1,7 +1,8 @@
 import { OutOfDomainError, whiteFlicker } from "@quietband/core";
-import { noiseBudget, statedNoise } from "@quietband/figures";
 import { expect, test } from "vitest";
 import { expectRelative } from "../../../../test/support/relative.js";
+import { noiseBudget } from "../../src/chain/noise-budget.js";
+import { statedNoise } from "../../src/chain/stated-noise.js";
 
 test("7.5 µV peak-to-peak is 1.14 µV RMS at the factor 6.6 (common practice, no source)", () => {
   expect(statedNoise({ peakToPeak: 7.5e-6 }).rms.toPrecision(3)).toBe("0.00000114");

@@ -1,7 +1,7 @@
 import { OutOfDomainError } from "@quietband/core";
-import { thermalNoise } from "@quietband/figures";
 import { expect, test } from "vitest";
 import { expectRelative } from "../../../../test/support/relative.js";
+import { thermalNoise } from "../../src/chain/thermal-noise.js";
 
 test("is white and follows 4kTR", () => {
   for (const hz of [0, 1, 1e9])

@@ -1,7 +1,7 @@
 import { OutOfDomainError } from "@quietband/core";
-import { tone } from "@quietband/figures";
 import { expect, test } from "vitest";
 import { expectRelative } from "../../../../test/support/relative.js";
+import { tone } from "../../src/chain/tone.js";
 
 test.each([
   ["sine", (turn: number) => Math.sin(2 * Math.PI * turn)],
