@@ -1,0 +1,8 @@
+import { checkCommand } from "./check.js";
+import type { Command } from "./command.js";
+import { fitCommand } from "./fit.js";
+import { noiseCommand } from "./noise.js";
+import { plotCommand } from "./plot.js";
+
+/** Every command, in the order a curve goes through them. */
+export const commands: readonly Command[] = Object.freeze([fitCommand, noiseCommand, checkCommand, plotCommand]);
