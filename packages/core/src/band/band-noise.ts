@@ -98,8 +98,15 @@ export function bandNoise(spectrum: Spectrum, options: BandNoiseOptions): BandNo
     outsidePoints,
     status: found.status,
     evaluations: found.evaluations,
-    notes: outsidePoints === nothingOutside ? noNotes : (spectrum.notes ?? noNotes),
+    notes: notesFor(spectrum, outsidePoints),
   });
+}
+
+/** What the spectrum assumes on a side counts only where the band reaches there. */
+function notesFor({ notes = noNotes }: Spectrum, { below, above }: BandNoise["outsidePoints"]): readonly string[] {
+  return Object.freeze(
+    notes.filter((note) => (note.startsWith("Below ") ? below > 0 : note.startsWith("Above ") ? above > 0 : true)),
+  );
 }
 
 /** Turns an integral that stopped at its limit into an error that carries the best estimate. */

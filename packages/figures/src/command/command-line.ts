@@ -32,11 +32,16 @@ export function runCommandLine(words: readonly string[], commands: readonly Comm
       return exitStatus.usage;
     }
     if (error instanceof NoiseError || isFileError(error)) {
-      streams.complain(`${error.message}\n`);
+      streams.complain(`${asTyped(error.message)}\n`);
       return exitStatus.badInput;
     }
     throw error;
   }
+}
+
+/** The library names its options as a script types them; here they have dashes. */
+function asTyped(message: string): string {
+  return message.replace(/beyond: \{ (below|above): (\d) \}/g, "--$1 $2");
 }
 
 function isFileError(error: unknown): error is Error {
