@@ -28,7 +28,7 @@ export const dampedDefaults: DampedOptions = Object.freeze({
   stepTolerance: 1e-11,
   mostSteps: 1000,
   stallTolerance: 2e-16,
-  mostStalled: 25,
+  mostStalled: 300,
 });
 
 /**
