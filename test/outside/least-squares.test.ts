@@ -110,11 +110,6 @@ const formulas: Readonly<Record<string, (b: ArrayLike<number>, x: number) => Gra
     const s = (b2 + x) ** (-1 / b3);
     return [b1 * s, s, (-b1 * s) / (b3 * (b2 + x)), (b1 * s * Math.log(b2 + x)) / (b3 * b3)];
   },
-  Eckerle4: ({ 0: b1 = 0, 1: b2 = 0, 2: b3 = 0 }, x) => {
-    const z = (x - b3) / b2;
-    const e = Math.exp(-0.5 * z * z);
-    return [(b1 / b2) * e, e / b2, ((b1 * e) / (b2 * b2)) * (z * z - 1), ((b1 * e) / (b2 * b2)) * z];
-  },
 };
 
 describe("nonlinear sets from both starts, to eight digits", () => {

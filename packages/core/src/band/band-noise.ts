@@ -68,7 +68,7 @@ const noNotes: readonly string[] = Object.freeze([]);
  * import { bandNoise, butterworthLowPass, whiteFlicker } from "@quietband/core";
  * const reference = whiteFlicker({ floor: 70e-9, cornerHz: 60 });
  * const weighting = butterworthLowPass({ order: 2, cutoffHz: 5 });
- * bandNoise(reference, { fromHz: 0.1, toHz: Infinity, weighting }).rms; // → 1.098e-6
+ * bandNoise(reference, { fromHz: 0.1, toHz: Infinity, weighting }).rms; // → 1.08483e-6
  * ```
  */
 export function bandNoise(spectrum: Spectrum, options: BandNoiseOptions): BandNoise {

@@ -36,7 +36,7 @@ export interface PointCostOptions extends BandNoiseOptions {
  * import { pointCost, readCurve } from "@quietband/core";
  * const curve = readCurve("frequency [Hz], density [nV/√Hz]\n0.1, 1000\n1, 400\n10, 100\n100, 80");
  * const costs = pointCost(curve, { fromHz: 0.1, toHz: 10 });
- * costs.map(({ share }) => share.toFixed(2)).join(" "); // → 0.17 0.77 0.06 0.00
+ * costs.map(({ share }) => share.toFixed(2)).join(" "); // → 0.13 0.73 0.13 0.00
  * ```
  */
 export function pointCost(curve: Curve, { beyond, ...band }: PointCostOptions): readonly PointCost[] {

@@ -39,7 +39,7 @@ export interface PreparedBand {
  * ```ts
  * import { butterworthLowPass, prepareBand, whiteFlicker } from "@quietband/core";
  * const band = prepareBand(butterworthLowPass({ order: 2, cutoffHz: 5 }), { fromHz: 0.1, toHz: 1000 });
- * band.rmsOf(whiteFlicker({ floor: 70e-9, cornerHz: 60 })); // → 1.098e-6
+ * band.rmsOf(whiteFlicker({ floor: 70e-9, cornerHz: 60 })); // → 1.08483e-6
  * band.rmsOf(whiteFlicker({ floor: 70e-9, cornerHz: 0 })); // → 163.47e-9
  * ```
  */

@@ -50,7 +50,7 @@ export function rmsFromDbfs(dbfs: number, fullScale: FullScale): number {
  * @example
  * ```ts
  * import { densityDbfsPerHz } from "@quietband/figures";
- * densityDbfsPerHz(70e-9, { rangePeakToPeak: 5 }); // → -148.04
+ * densityDbfsPerHz(70e-9, { rangePeakToPeak: 5 }); // → -148.05
  * ```
  */
 export function densityDbfsPerHz(density: number, fullScale: FullScale): number {
