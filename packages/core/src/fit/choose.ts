@@ -105,7 +105,7 @@ function spreadOf(all: readonly Tried[]): number {
 }
 
 /** Why the points do not fix the parameters of a model; undefined where they do. */
-export function whyUnsupported(
+function whyUnsupported(
   { model, parameters, covariance, converged }: RefinedFit,
   { x }: FitPoints,
 ): string | undefined {

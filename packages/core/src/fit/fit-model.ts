@@ -31,7 +31,7 @@ interface ShapeTerm {
 }
 
 /** Density of a rising term goes as f, its power as f²: an amplifier's high-frequency rise. */
-export const riseExponent = 2;
+const riseExponent = 2;
 
 export function fitModel(name: FitModelName, exponent: ResolvedExponent): FitModel {
   const own = exponent.kind !== "fixed" && name !== "floor";
@@ -128,7 +128,7 @@ function extraTerms(name: FitModelName, at: number): ShapeTerm[] {
 }
 
 /** ln(1 + e^z) without overflow. */
-export function softplus(z: number): number {
+function softplus(z: number): number {
   return z > 0 ? z + Math.log1p(Math.exp(-z)) : Math.log1p(Math.exp(z));
 }
 

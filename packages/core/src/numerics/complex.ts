@@ -8,20 +8,42 @@ export function times(one: Complex, other: Complex): Complex {
   return { re: one.re * other.re - one.im * other.im, im: one.re * other.im + one.im * other.re };
 }
 
-/** Smith's division: no overflow where the quotient has none. */
 export function over(one: Complex, other: Complex): Complex {
-  if (Math.abs(other.re) >= Math.abs(other.im)) {
-    const ratio = other.im / other.re;
-    const scale = other.re + other.im * ratio;
-    return { re: (one.re + one.im * ratio) / scale, im: (one.im - one.re * ratio) / scale };
-  }
-  const ratio = other.re / other.im;
-  const scale = other.re * ratio + other.im;
-  return { re: (one.re * ratio + one.im) / scale, im: (one.im * ratio - one.re) / scale };
+  const scale = 1 / (other.re * other.re + other.im * other.im);
+  return {
+    re: scale * (one.re * other.re + one.im * other.im),
+    im: scale * (one.im * other.re - one.re * other.im),
+  };
 }
 
-export function size(z: Complex): number {
-  return Math.sqrt(z.re * z.re + z.im * z.im);
+export function plus(one: Complex, other: Complex): Complex {
+  return { re: one.re + other.re, im: one.im + other.im };
+}
+
+export function minus(one: Complex, other: Complex): Complex {
+  return { re: one.re - other.re, im: one.im - other.im };
+}
+
+export function scaledBy(factor: number, { re, im }: Complex): Complex {
+  return { re: factor * re, im: factor * im };
+}
+
+export function conjugate({ re, im }: Complex): Complex {
+  return { re, im: -im };
+}
+
+export function sizeOf({ re, im }: Complex): number {
+  return Math.sqrt(re * re + im * im);
+}
+
+/** first² − second² without more cancellation than there is between them. */
+export function squareDifference(first: Complex, second: Complex): Complex {
+  return times(minus(first, second), plus(first, second));
+}
+
+/** r·exp(j·angle) */
+export function polar(radius: number, angle: number): Complex {
+  return { re: radius * Math.cos(angle), im: radius * Math.sin(angle) };
 }
 
 /** exp(z) − 1 without cancellation near 0. */

@@ -1,4 +1,4 @@
-import { type Complex, conjugate, minus, over, plus, sizeOf, squareDifference, times } from "./complex.js";
+import { type Complex, conjugate, minus, over, sizeOf, squareDifference, times } from "./complex.js";
 import type { SquarePole } from "./pole-integral.js";
 
 /** gain · x^(2·zerosAtOrigin) · Π|jx − zero|² / Π|jx − pole|²; complex ones are listed with their conjugates. */
@@ -42,6 +42,8 @@ export interface PartialFractions {
 
 /** Roots closer than this, relative to their size, are equal: a design may round them apart. */
 const equal = 1e-15;
+/** Beyond this many, residues cancel more than partial fractions gain. */
+const mostPoles = 32;
 /** Poles closer than this and not equal are too clustered for partial fractions. */
 const clustered = 1e-4;
 const nothing: Residue = Object.freeze({ re: 0, im: 0, size: 0 });
@@ -49,50 +51,54 @@ const nothing: Residue = Object.freeze({ re: 0, im: 0, size: 0 });
 /**
  * Partial fractions in x² of a rational power gain, made once and used for any term and band by `rationalIntegral`.
  * Residues are Taylor coefficients about a pole of the product of all other factors, whose differences,
- * b_j² − b_k² = (b_j − b_k)(b_j + b_k), do not cancel. Undefined where no such form exists or it is useless: no poles, more
+ * b_j² − b_k² = (b_j − b_k)(b_j + b_k), do not cancel. Undefined where no such form exists or it is useless: no poles or very many, more
  * zeros than poles, a pole on the imaginary axis, poles that are nearly but not quite equal, or roots without their conjugates.
  */
 export function preparePartialFractions(shape: RationalShape): PartialFractions | undefined {
-  if (shape.poles.length === 0 || shape.zeros.length > shape.poles.length) return undefined;
+  if (shape.poles.length === 0 || shape.poles.length > mostPoles || shape.zeros.length > shape.poles.length)
+    return undefined;
+  // Where the gain has left the normal doubles it has lost its digits.
+  if (!(shape.gain > 1e-300 && shape.gain < 1e300)) return undefined;
   const unit = powerOfTwoNear(shape.poles);
   const poles = rootsOf(shape.poles, unit);
   const zeros = rootsOf(shape.zeros, unit);
-  if (poles === undefined || zeros === undefined || !separate(poles.flatMap(each))) return undefined;
+  if (poles === undefined || zeros === undefined) return undefined;
+  const everyPole = poles.flatMap(each);
+  const everyZero = zeros.flatMap(each);
+  if (!separate(everyPole)) return undefined;
   const excess = shape.poles.length - shape.zeros.length;
   const gain = timesPowerOfTwo(shape.gain, 2 * Math.log2(unit) * (shape.zerosAtOrigin - excess));
-  if (!(gain > 0 && gain < Number.POSITIVE_INFINITY)) return undefined;
+  if (!(gain > 1e-300 && gain < 1e300)) return undefined;
   return Object.freeze({
     unit,
     zerosAtOrigin: shape.zerosAtOrigin,
     whole: excess === 0 ? gain : 0,
-    poles: Object.freeze(poles.map((root) => fractionPole(root, gain, poles, zeros))),
+    poles: Object.freeze(poles.map((root) => fractionPole(root, gain, everyPole, everyZero))),
     zeros: Object.freeze(zeros),
   });
 }
 
-function fractionPole(root: Root, gain: number, poles: readonly Root[], zeros: readonly Root[]): FractionPole {
-  const { b, multiplicity } = root;
-  const others = poles.flatMap(each).filter((pole) => pole !== b);
-  const everyZero = zeros.flatMap(each);
-  let series = Array.from({ length: multiplicity }, (_, k) => ({
-    re: k === 0 ? gain : 0,
-    im: 0,
-    size: k === 0 ? gain : 0,
-  }));
+function fractionPole(root: Root, gain: number, poles: readonly Complex[], zeros: readonly Complex[]): FractionPole {
+  const { b, multiplicity, count } = root;
+  let series: Residue[] = Array.from({ length: multiplicity }, (_, k) =>
+    k === 0 ? { re: gain, im: 0, size: gain } : nothing,
+  );
   // Poles and zeros in turn keep the product within range at high orders.
-  for (let k = 0; k < Math.max(others.length, everyZero.length); k += 1) {
-    const [pole, at] = [others[k], everyZero[k]];
-    if (pole !== undefined) series = dividedBy(series, squareDifference(pole, b));
+  for (const [k, pole] of poles.entries()) {
+    if (pole !== b) series = dividedBy(series, squareDifference(pole, b));
+    const at = zeros[k];
     if (at !== undefined) series = multipliedBy(series, squareDifference(at, b));
   }
   const c = times(b, b);
   const residues = [series];
-  for (let left = others.length + multiplicity - everyZero.length; left > 1; left -= 1) {
+  while (residues.length < poles.length - zeros.length) {
     series = multipliedBy(series, { re: -c.re, im: -c.im });
     residues.push(series);
   }
   return Object.freeze({
-    ...root,
+    b,
+    multiplicity,
+    count,
     c,
     ln: Math.log(sizeOf(b)),
     angle: Math.atan2(b.im, b.re),
@@ -103,9 +109,12 @@ function fractionPole(root: Root, gain: number, poles: readonly Root[], zeros: r
 /** A power series in h = X + c times shift + h. */
 function multipliedBy(series: readonly Residue[], shift: Complex): Residue[] {
   const scale = sizeOf(shift);
-  return series.map((term, k) => {
-    const before = series[k - 1] ?? nothing;
-    return { ...plus(times(term, shift), before), size: term.size * scale + before.size };
+  let before = nothing;
+  return series.map((term) => {
+    const { re, im } = times(term, shift);
+    const next = { re: re + before.re, im: im + before.im, size: term.size * scale + before.size };
+    before = term;
+    return next;
   });
 }
 
@@ -114,7 +123,8 @@ function dividedBy(series: readonly Residue[], shift: Complex): Residue[] {
   const scale = 1 / sizeOf(shift);
   let before = nothing;
   return series.map((term) => {
-    before = { ...over(minus(term, before), shift), size: scale * (term.size + before.size) };
+    const { re, im } = over({ re: term.re - before.re, im: term.im - before.im }, shift);
+    before = { re, im, size: scale * (term.size + before.size) };
     return before;
   });
 }

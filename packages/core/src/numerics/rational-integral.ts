@@ -9,6 +9,7 @@ import { rootEffects } from "./root-effects.js";
 
 /** Largest relative error that counts as well conditioned. */
 const mostError = 1e-13;
+
 /**
  * ∫ level · (x/at)^(−a) · |H|² dx over [from, to], 0 ≤ from < to ≤ ∞, for a rational power gain given by its
  * {@link PartialFractions}, with a bound on its absolute error; undefined where that would be above 1e-13 of the value
@@ -28,10 +29,23 @@ export function rationalIntegral(
   to: number,
 ): BoundedValue | undefined {
   if (term.level === 0) return { value: 0, error: 0 };
+  const first = indexFor(fractions, term.exponent, from / fractions.unit, to / fractions.unit);
+  if (first === "split") return sumOfTwo(term, fractions);
+  if (first === undefined) return undefined;
+  // Among poles decades apart the next smaller index often cancels less.
+  return (
+    withIndex(term, fractions, first, [from, to]) ??
+    (first > 0 && to < Number.POSITIVE_INFINITY ? withIndex(term, fractions, first - 1, [from, to]) : undefined)
+  );
+}
+
+function withIndex(
+  term: PowerLawTerm,
+  fractions: PartialFractions,
+  index: number,
+  [from, to]: readonly [number, number],
+): BoundedValue | undefined {
   const { unit, zerosAtOrigin, whole } = fractions;
-  const index = indexFor(fractions, term.exponent, from / unit, to / unit);
-  if (index === "split") return sumOfTwo(term, fractions);
-  if (index === undefined) return undefined;
   const lead = 0.5 * (2 * (zerosAtOrigin - index) + 1 - term.exponent);
   const sum = sumOverPoles(fractions, index, lead, [from, to]);
   if (sum === undefined) return undefined;
@@ -43,7 +57,7 @@ export function rationalIntegral(
     error += 8 * Number.EPSILON * direct;
   }
   const scale = levelAtUnit(term, unit) * unit;
-  const relative = error / value + termError(term, unit, [from, to]) + (polesOf(fractions) + 4) * Number.EPSILON;
+  const relative = error / value + termError(term, lead, unit, [from, to]) + (polesOf(fractions) + 4) * Number.EPSILON;
   const total = scale * value;
   if (!(relative <= mostError && total > 1e-290 && total < 1e300)) return undefined;
   return { value: total, error: total * relative };
@@ -104,9 +118,9 @@ function indexFor(
   if (poles.every(({ b }) => high <= sizeOf(b))) wanted = 0;
   if (poles.every(({ b }) => low >= sizeOf(b))) wanted = last;
   // s = rise − index: above 0 from 0 on, below 1 to ∞, with some distance where there is a choice
-  for (const margin of [0.2, 1e-300]) {
-    const least = Math.max(0, high === Number.POSITIVE_INFINITY ? Math.ceil(rise - 1 + margin) : 0);
-    const most = Math.min(last, low === 0 ? Math.floor(rise - margin) : last);
+  for (const margin of [0.2, 0]) {
+    const least = Math.max(0, high === Number.POSITIVE_INFINITY ? Math.floor(rise - 1 + margin) + 1 : 0);
+    const most = Math.min(last, low === 0 ? Math.ceil(rise - margin) - 1 : last);
     if (least <= most) return Math.min(Math.max(wanted, least), most);
     if (low === 0 && high === Number.POSITIVE_INFINITY && last > 0) return "split";
   }
@@ -117,11 +131,19 @@ function levelAtUnit({ at, level, exponent }: PowerLawTerm, unit: number): numbe
   return exponent === 0 || unit === at ? level : level * (unit / at) ** -exponent;
 }
 
-/** The rounding of the level at the unit and, for an exponent that is itself rounded, what that does over the band. */
-function termError({ at, exponent }: PowerLawTerm, unit: number, edges: readonly [number, number]): number {
+/** The rounding of the level at the unit and, for an exponent that is itself rounded, what that and lead's do over the band. */
+function termError(
+  { at, exponent }: PowerLawTerm,
+  lead: number,
+  unit: number,
+  edges: readonly [number, number],
+): number {
   if (exponent === 0) return 4 * Number.EPSILON;
-  let reach = 4 * Math.abs(Math.log(unit / at));
-  for (const edge of edges)
-    if (edge > 0 && edge < Number.POSITIVE_INFINITY) reach += 2 * Math.abs(Math.log(edge / unit));
-  return Number.EPSILON * (4 + Math.abs(exponent) * (1 + reach));
+  const steep = Math.abs(exponent);
+  let reach = 0;
+  for (const edge of edges) if (edge > 0 && edge < Number.POSITIVE_INFINITY) reach += Math.abs(Math.log(edge / unit));
+  const leadError = Number.isInteger(exponent) ? 0 : Math.abs(lead);
+  return (
+    Number.EPSILON * (4 + steep * (1 + 4 * Math.abs(Math.log(unit / at))) + 2 * Math.max(steep, leadError) * reach)
+  );
 }

@@ -152,7 +152,7 @@ describe("bad calibrations are refused in one sentence", () => {
   });
   const referencePoints = [0, 1, 2].map((k) => ({ x: 100 * k, y: 50 * k, frequency: 10 ** k, density: 10 ** (k - 9) }));
 
-  test.each([
+  test.each<[AxesDescription, RegExp]>([
     [withTicks([0, 1]), /at least two ticks/],
     [withTicks([0, 1], [0, 10]), /at least two ticks at different pixels/],
     [withTicks([0, 0], [9, 10]), /frequency axis must be above zero and finite; got 0/],
@@ -161,7 +161,7 @@ describe("bad calibrations are refused in one sentence", () => {
     [withTicks([0, 1], [50, 100], [100, 10]), /contradicts itself|do not lie on one line/],
     [{ ...plot, referencePoints }, /lie on one line/],
     [{ ...plot, referencePoints: referencePoints.slice(0, 2) }, /at least three reference points; got 2/],
-    [{ ...plot, frequency: { kind: "dB" } } as AxesDescription, /frequency axis must be 'log' or 'linear'/],
+    [{ ...plot, frequency: { kind: "dB" } }, /frequency axis must be 'log' or 'linear'/],
     [{ ...plot, density: { kind: "octaves" } } as never, /must be 'log', 'linear' or 'dB'; got octaves/],
     [{ ...plot, tickErrorPixels: 0 }, /tickErrorPixels must be a positive finite number/],
     [{ ...plot, ticks: [] } as never, /no option "ticks"/],

@@ -29,6 +29,14 @@ describe("against 60-digit values", () => {
   });
 });
 
+test("narrow stretches keep a bound of a few ulp", () => {
+  for (const s of [-2, 0, 0.5, 3])
+    for (const from of [1e-3, 0.7, 1, 20]) {
+      const { value, error } = powerOverOnePlus(s, from, from * (1 + 2 ** -20));
+      expect(error).toBeLessThan(3e-15 * value);
+    }
+});
+
 test("known integrals: π/sin(πs) over everything, logarithms at s = 0 and s = 1, the arc tangent at s = ½", () => {
   const over = (s: number, from: number, to: number): number => powerOverOnePlus(s, from, to).value;
   expectRelative(over(0.3, 0, Number.POSITIVE_INFINITY), Math.PI / Math.sin(0.3 * Math.PI), 1e-15);

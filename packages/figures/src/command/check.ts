@@ -62,7 +62,7 @@ export const checkCommand: Command = {
 };
 
 /** One comparison in lines. */
-export function checkLines(check: StatedFigureCheck, signalUnit: string): string[] {
+function checkLines(check: StatedFigureCheck, signalUnit: string): string[] {
   const unit = check.figure.kind === "density" ? `${signalUnit}/√Hz` : signalUnit;
   const { points, rounding, unknownMeasurement } = check.tolerance;
   const percent = (share: number): string => `${(100 * share).toFixed(1)} %`;

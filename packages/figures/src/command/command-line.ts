@@ -1,7 +1,8 @@
 import { NoiseError } from "@quietband/core";
-import { type Command, UsageError } from "./command.js";
+import type { Command } from "./command.js";
 import { nearest, type OptionSpec, parseOptions } from "./command-options.js";
 import type { Streams } from "./streams.js";
+import { UsageError } from "./usage-error.js";
 
 /** Exit status: done, bad input, used wrongly. */
 export const exitStatus: Readonly<Record<"done" | "badInput" | "usage", number>> = Object.freeze({

@@ -1,4 +1,4 @@
-import { UsageError } from "./command.js";
+import { UsageError } from "./usage-error.js";
 
 /** One option a command takes. */
 export interface OptionSpec {
@@ -27,26 +27,19 @@ export function parseOptions(command: string, specs: readonly OptionSpec[], word
   const values = new Map<string, string[]>();
   for (let index = 0; index < words.length; index += 1) {
     const word = words[index] as string;
-    if (!word.startsWith("--") || word === "--") {
-      if (word.startsWith("-") && word.length > 1)
-        throw new UsageError(`Options begin with two dashes; got ${word}. See quietband ${command} --help.`);
+    if (!isOption(command, word)) {
       files.push(word);
       continue;
     }
-    const [name = "", inline] = splitOnce(word.slice(2));
+    const [name, inline] = splitOnce(word.slice(2));
     const spec = specs.find((known) => known.name === name);
     if (spec === undefined) throw new UsageError(unknownOption(command, name, specs));
-    let value: string | undefined = inline;
-    if (spec.value !== "" && inline === undefined) {
-      index += 1;
-      value = words[index];
-    }
-    if (spec.value === "" && inline !== undefined) throw new UsageError(`--${name} takes no value; got ${inline}.`);
-    if (spec.value !== "" && value === undefined)
-      throw new UsageError(`--${name} needs a value: --${name} ${spec.value}.`);
+    const follows = spec.value !== "" && inline === undefined;
+    const value = givenValue(spec, follows ? words[index + 1] : inline);
+    if (follows) index += 1;
     const before = values.get(name) ?? [];
     if (before.length > 0 && spec.repeats !== true) throw new UsageError(`--${name} may be given once only.`);
-    values.set(name, [...before, value ?? ""]);
+    values.set(name, [...before, value]);
   }
   return {
     files,
@@ -54,6 +47,18 @@ export function parseOptions(command: string, specs: readonly OptionSpec[], word
     one: (name) => values.get(name)?.[0],
     has: (name) => values.has(name),
   };
+}
+
+function isOption(command: string, word: string): boolean {
+  if (word.startsWith("--") && word.length > 2) return true;
+  if (!word.startsWith("-") || word.length === 1) return false;
+  throw new UsageError(`Options begin with two dashes; got ${word}. See quietband ${command} --help.`);
+}
+
+function givenValue({ name, value: expected }: OptionSpec, given: string | undefined): string {
+  if (expected === "" && given !== undefined) throw new UsageError(`--${name} takes no value; got ${given}.`);
+  if (expected !== "" && given === undefined) throw new UsageError(`--${name} needs a value: --${name} ${expected}.`);
+  return given ?? "";
 }
 
 function splitOnce(text: string): readonly [string, string | undefined] {

@@ -13,11 +13,3 @@ export interface Command {
   readonly example: { readonly type: string; readonly answers: string };
   run(parsed: ParsedOptions, streams: Streams): void;
 }
-
-/** How the command line was used wrongly; exit status 2. */
-export class UsageError extends Error {
-  constructor(message: string) {
-    super(message);
-    this.name = "UsageError";
-  }
-}

@@ -1,7 +1,7 @@
 import { type Beyond, type Curve, MalformedDataError, readCurve } from "@quietband/core";
-import { UsageError } from "./command.js";
 import type { OptionSpec, ParsedOptions } from "./command-options.js";
 import type { Streams } from "./streams.js";
+import { UsageError } from "./usage-error.js";
 
 /** Options of every command that integrates a curve. */
 export const beyondOptions: readonly OptionSpec[] = Object.freeze([

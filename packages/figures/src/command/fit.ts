@@ -80,7 +80,7 @@ export function modelText({ model }: FittedCurve): string {
   return modelWords[model];
 }
 
-export function parameterLines(fit: FittedCurve, unit: string): string[] {
+function parameterLines(fit: FittedCurve, unit: string): string[] {
   const { floor, cornerHz, exponent, standardErrors: errors } = fit;
   const relative = (error: number | undefined): string =>
     error === undefined ? "" : `± ${(100 * error).toFixed(1)} % (k = 1)`;

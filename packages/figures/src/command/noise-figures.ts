@@ -89,7 +89,7 @@ function converterLines(converter: ConverterFigures | undefined): FigureLine[] {
   return lines;
 }
 
-export function uncertaintyText({ standardUncertainty }: BandNoise): string {
+function uncertaintyText({ standardUncertainty }: BandNoise): string {
   return standardUncertainty === undefined
     ? "no uncertainty stated"
     : `± ${(100 * standardUncertainty).toFixed(1)} % (k = 1)`;

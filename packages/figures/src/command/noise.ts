@@ -1,8 +1,9 @@
 import { bandNoise, cascade, polyline, readBand, writeQuantity } from "@quietband/core";
-import { type Command, UsageError } from "./command.js";
+import type { Command } from "./command.js";
 import { beyondOptions, provenanceLines, readBeyond, readCurveInput } from "./curve-input.js";
 import { figureLines, figureOptions, inColumns, noiseFigures } from "./noise-figures.js";
-import { readThrough } from "./through.js";
+import { readThrough, throughKinds } from "./through.js";
+import { UsageError } from "./usage-error.js";
 
 /** Noise of a curve in a band, through a filter, as the figures a review asks for. */
 export const noiseCommand: Command = {
@@ -14,7 +15,7 @@ export const noiseCommand: Command = {
     {
       name: "through",
       value: "FILTER",
-      help: 'a filter in words, for instance "Butterworth low-pass, order 2, 5 Hz"; may be repeated',
+      help: `a filter in words, for instance "Butterworth low-pass, order 2, 5 Hz"; may be repeated; known are: ${throughKinds().join("; ")}`,
       repeats: true,
     },
     ...beyondOptions,

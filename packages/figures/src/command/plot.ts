@@ -1,10 +1,11 @@
 import { fitCurve, polyline, readBand, runningNoise } from "@quietband/core";
 import { densityPlot } from "../show/density-plot.js";
 import { runningNoisePlot } from "../show/running-noise-plot.js";
-import { type Command, UsageError } from "./command.js";
+import type { Command } from "./command.js";
 import { beyondOptions, readBeyond, readCurveInput } from "./curve-input.js";
 import { modelText } from "./fit.js";
 import { quantityOption } from "./typed-values.js";
+import { UsageError } from "./usage-error.js";
 
 /** A curve and its model as a picture, or its noise against bandwidth. */
 export const plotCommand: Command = {
@@ -61,7 +62,7 @@ export const plotCommand: Command = {
 };
 
 /** Forty edges a decade, the last one exact. */
-export function edgesBetween(fromHz: number, toHz: number): number[] {
+function edgesBetween(fromHz: number, toHz: number): number[] {
   if (!(fromHz > 0 && toHz < Number.POSITIVE_INFINITY))
     throw new UsageError("quietband plot --running needs a band with finite edges above 0 Hz.");
   const steps = Math.max(2, Math.ceil(40 * Math.log10(toHz / fromHz)));

@@ -125,7 +125,8 @@ function readFilter(text: string): Weighting {
       `No filter is called "${name.slice(0, 40)}"; ${near === undefined ? `known are ${Object.keys(kinds).join(", ")}` : `did you mean "${near}"?`}${near === undefined ? "." : ""}`,
     );
   }
-  const { asks, make } = kinds[known] as Kind;
+  const kind = kinds[known] as Kind;
+  const { asks } = kind;
   const values: Record<string, number> = {};
   for (const part of rest) readNumber(known, asks, part, values);
   const missing = asks.find(({ word }) => values[word] === undefined);
@@ -133,7 +134,7 @@ function readFilter(text: string): Weighting {
     throw new OutOfDomainError(
       `A ${known} needs ${asks.map(({ word, unit }) => (unit === "" ? word : `${word} in ${unit}`)).join(", ")}; ${missing.word} is missing.`,
     );
-  return make(values);
+  return kind.make(values);
 }
 
 function readNumber(kind: string, asks: readonly Asked[], part: string, values: Record<string, number>): void {

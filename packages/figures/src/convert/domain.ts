@@ -41,8 +41,8 @@ export function refuseUnknownKeys(where: string, known: readonly string[], given
 /** A value as a message shows it. */
 export function shown(value: unknown): string {
   if (typeof value === "string") return `the text "${value.slice(0, 40)}"`;
-  if (typeof value === "object" && value !== null) return "a record";
-  return value === undefined ? "nothing" : String(value);
+  if (typeof value === "number" || typeof value === "boolean") return String(value);
+  return value === undefined || value === null ? "nothing" : "something that is no number";
 }
 
 function inUnit(unit: string): string {

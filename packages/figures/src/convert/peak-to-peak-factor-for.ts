@@ -32,7 +32,8 @@ export function peakToPeakFactorFor(share: GaussianShare): number {
     throw new OutOfDomainError(
       "peakToPeakFactorFor takes shareOutside, the share of time beyond ± half the peak-to-peak value, or shareInside; give exactly one.",
     );
-  if (shareOutside !== undefined) return 2 * upperNormalQuantile(requireInside("shareOutside", shareOutside, [0, 1]) / 2);
+  if (shareOutside !== undefined)
+    return 2 * upperNormalQuantile(requireInside("shareOutside", shareOutside, [0, 1]) / 2);
   const inside = requireInside("shareInside", shareInside as number, [0, 1]);
   return 2 * (inside < 0.85 ? centralNormalQuantile(inside / 2) : upperNormalQuantile((1 - inside) / 2));
 }

@@ -66,8 +66,7 @@ export function peakToPeak(rms: Rms, convention: PeakToPeakConvention = {}): Pea
 export function factorOf(where: string, convention: PeakToPeakConvention): number {
   refuseUnknownKeys(where, ["factor", "shareOutside"], convention);
   const { factor, shareOutside: share } = convention;
-  if (share === undefined)
-    return requirePositive("factor, peak-to-peak / RMS,", factor ?? peakToPeakDefaults.factor);
+  if (share === undefined) return requirePositive("factor, peak-to-peak / RMS,", factor ?? peakToPeakDefaults.factor);
   if (factor === undefined) return peakToPeakFactorFor({ shareOutside: share });
   throw new OutOfDomainError(`${where} takes factor or shareOutside, not both: each follows from the other.`);
 }

@@ -1,7 +1,7 @@
 import { requireWhole } from "./domain.js";
 import { gaussLegendre } from "./gauss-legendre.js";
-import { normalDensity, normalTail } from "./normal-tail.js";
 import { upperNormalQuantile } from "./normal-quantile.js";
+import { normalDensity, normalTail } from "./normal-tail.js";
 
 /** Mean and standard deviation of a range, in units of the standard deviation of one value. */
 export interface RangeOfNormals {

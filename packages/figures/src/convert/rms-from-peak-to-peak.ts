@@ -17,7 +17,7 @@ import { factorOf, type PeakToPeak, type PeakToPeakConvention } from "./peak-to-
  * ```
  */
 export function rmsFromPeakToPeak(given: number | PeakToPeak, convention?: PeakToPeakConvention): number {
-  if (typeof given === "object" && given !== null) {
+  if (given instanceof Object) {
     if (convention === undefined) return requirePositive("rms", given.rms);
     throw new OutOfDomainError(
       `The peak-to-peak value was made with the factor ${given.factor}; give no second convention, or the bare number with it.`,

@@ -6,7 +6,7 @@ export type Rms = number | { readonly rms: number };
 
 /** The number in an {@link Rms}, positive; a peak-to-peak value is refused, for its level would be some 16 dB off. */
 export function rmsOf(name: string, given: Rms, unit = ""): number {
-  if (typeof given !== "object" || given === null) return requirePositive(name, given, unit);
+  if (!(given instanceof Object)) return requirePositive(name, given, unit);
   if ((given as { readonly kind?: unknown }).kind === "peak-to-peak")
     throw new OutOfDomainError(
       `${name} must be an RMS value${unit === "" ? "" : ` in ${unit}`}; got a peak-to-peak value; take its rms, or rmsFromPeakToPeak with the factor it was made with.`,
