@@ -13,6 +13,7 @@ export type {
   NoiseBudgetOptions,
 } from "./chain/budget-options.js";
 export type { BudgetPeakToPeak, BudgetShare, BudgetTargetAnswer, NoiseBudget } from "./chain/budget-result.js";
+export { chainSchema } from "./chain/chain-schema.js";
 export {
   type CandidateParts,
   type CompareAgainstResistanceOptions,
@@ -28,6 +29,7 @@ export {
   type CurveComparison,
   compareCurves,
 } from "./chain/compare-curves.js";
+export { type FilterKind, type FilterNumber, filterKinds } from "./chain/filter-kinds.js";
 export { type NamedSpectrum, namedSpectrum } from "./chain/named-spectrum.js";
 export { type NoiseAcrossOptions, noiseAcross } from "./chain/noise-across.js";
 export { noiseBudget } from "./chain/noise-budget.js";
@@ -36,10 +38,12 @@ export { type ObservationNoiseOptions, type ObservedNoise, observationNoise } fr
 export { parallelParts } from "./chain/parallel-parts.js";
 export { type QuantizationNoise, type QuantizationOptions, quantization } from "./chain/quantization.js";
 export { type RatiometricPaths, ratiometricRemainder } from "./chain/ratiometric-remainder.js";
+export { type Chain, type ReadChainOptions, readChain } from "./chain/read-chain.js";
 export type { ReferenceInput } from "./chain/reference-input.js";
 export { type ReferenceUseOptions, type ReferenceUseRow, referenceNoiseByUse } from "./chain/reference-noise-by-use.js";
 export { type ReferencePathNoise, referencePathNoise } from "./chain/reference-path-noise.js";
 export type { ReferenceConverter, ReferencePathOptions } from "./chain/reference-path-options.js";
+export { referenceSpectrum } from "./chain/reference-spectrum.js";
 export { type ResistorExcessNoiseOptions, resistorExcessNoise } from "./chain/resistor-excess-noise.js";
 export type { ReferencePart } from "./chain/seen-parts.js";
 export { type ShotNoiseOptions, shotNoise } from "./chain/shot-noise.js";

@@ -1,6 +1,6 @@
 import { type BandNoise, NoiseError, OutOfDomainError, type Weighting } from "@quietband/core";
 import { refuseUnknownKeys, requireFinite, requireNotNegative, shown } from "../convert/domain.js";
-import { type BandMeter, bandMeter } from "./band-meter.js";
+import { type BandMeter, bandMeter, type MeasuredBand } from "./band-meter.js";
 import type { BudgetSource } from "./budget-options.js";
 import type { NamedSpectrum } from "./named-spectrum.js";
 import { isSpectrum, type NoiseSource } from "./noise-source.js";
@@ -71,7 +71,7 @@ export function budgetLines(
         throw new OutOfDomainError(
           `its noise is in ${own} where the others are in ${unit}; give the unit behind its gain with unit.`,
         );
-      return lineOf(given, name, context, { measure, weighting: weightingOf(given) });
+      return inRange(lineOf(given, name, context, { measure, weighting: weightingOf(given) }));
     });
   });
   return { lines, unit: unit ?? "V" };
@@ -89,29 +89,67 @@ function lineOf(
   if (partFactor !== undefined && !(partFactor >= 1 && partFactor < Number.POSITIVE_INFINITY))
     throw new OutOfDomainError(`partFactor must be a finite factor of 1 or more; got ${shown(partFactor)}.`);
   const gain = (ownGain * context.path.wayFrom(enters).gain) / context.place.gain;
-  const shared = { name, given, source, gain, weighting, addedUncertainty: standardUncertainty, partFactor };
-  if (isSpectrum(source)) {
-    const found = measure(source, weighting);
-    return {
-      ...shared,
-      power: gain * gain * found.power,
-      powerError: 2 * found.numericalError,
-      swing: 0,
-      ownUncertainty: found.standardUncertainty,
-      outsidePoints: found.outsidePoints,
-      notes: [...((source as Partial<NamedSpectrum>).assumptions ?? []), ...found.notes],
-    };
-  }
-  const arrived = source.kind === "tone" ? toneGain(source, weighting, context) : 1;
+  const shared = { name, given, gain, weighting, addedUncertainty: standardUncertainty, partFactor };
+  if (!isSpectrum(source)) return { ...shared, source, ...withoutDensity(source, shared, context) };
+  const found = measure(source, weighting);
+  const assumptions = (source as Partial<NamedSpectrum>).assumptions ?? [];
   return {
     ...shared,
-    power: arrived * gain * gain * source.rms * source.rms,
-    powerError: 4 * Number.EPSILON,
-    swing: source.kind === "tone" ? Math.sqrt(arrived) * Math.abs(gain) * source.peakToPeak : 0,
-    ownUncertainty: source.kind === "stated" ? source.standardUncertainty : undefined,
-    outsidePoints: undefined,
-    notes: [...source.assumptions, ...(source.kind === "stated" ? bandNotes(source, context) : [])],
+    source,
+    power: gain * gain * found.power,
+    powerError: 2 * found.numericalError,
+    swing: 0,
+    ownUncertainty: found.standardUncertainty,
+    outsidePoints: found.outsidePoints,
+    notes: restsOnAssumption(found) ? [...assumptions, ...found.notes] : assumptions,
   };
+}
+
+/** A power that is no number, or nothing where there should be something, comes from a gain beyond all reason. */
+function inRange(line: BudgetLine): BudgetLine {
+  const { gain, power } = line;
+  const lost = power === 0 && gain !== 0 && gain * gain < Number.MIN_VALUE;
+  if (Number.isFinite(power) && !lost) return line;
+  throw new OutOfDomainError(
+    `its gain of ${gain} takes its power out of the range of numbers; check the gains on its way.`,
+  );
+}
+
+type Measured = Pick<BudgetLine, "power" | "powerError" | "swing" | "ownUncertainty" | "outsidePoints" | "notes">;
+
+/** A tone or a stated figure as it arrives. */
+function withoutDensity(
+  source: StatedNoise | Tone,
+  { given, gain, weighting }: Pick<BudgetLine, "given" | "gain" | "weighting">,
+  context: LinesContext,
+): Measured {
+  const shared = { powerError: 4 * Number.EPSILON, outsidePoints: undefined };
+  if (source.kind === "tone") {
+    const passed = gain * gain * toneGain(source, weighting, context);
+    return {
+      ...shared,
+      power: passed * source.rms * source.rms,
+      swing: Math.sqrt(passed) * source.peakToPeak,
+      ownUncertainty: undefined,
+      notes: source.assumptions,
+    };
+  }
+  if (given.weighting !== undefined)
+    throw new OutOfDomainError(
+      "a stated figure has no density that a weighting could act on; leave the weighting out.",
+    );
+  return {
+    ...shared,
+    power: gain * gain * source.rms * source.rms,
+    swing: 0,
+    ownUncertainty: source.standardUncertainty,
+    notes: [...source.assumptions, ...bandNotes(source, context)],
+  };
+}
+
+/** Whether what lies outside the points is worth a sentence: a filter leaves 1e-14 of it. */
+function restsOnAssumption({ outsidePoints: { below, above } }: MeasuredBand): boolean {
+  return below + above > 1e-6;
 }
 
 /** Power gain to a tone: what the weighting does at its frequency, nothing where the band leaves it out. */

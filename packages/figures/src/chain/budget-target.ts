@@ -35,6 +35,10 @@ export function answerTarget(target: BudgetTarget, context: TargetContext): Budg
   const met = context.rms <= rms;
   const verdict = `${writeQuantity(context.rms, unit, { digits: 4 })} RMS ${met ? "meets" : "misses"} the target of ${writeQuantity(rms, unit)}`;
   const edge = edgeMeeting(rms, family, context);
+  if (edge === undefined) {
+    const moved = family === undefined ? "upper band edge" : "cutoff";
+    return Object.freeze({ rms, met, text: `${verdict}; ${met ? `so does every ${moved}` : `no ${moved} does`}.` });
+  }
   if (typeof edge === "string") return Object.freeze({ rms, met, text: `${verdict}; ${edge}.` });
   const at = writeQuantity(edge.hz, "Hz", { digits: 4 });
   const place = family === undefined ? `an upper band edge of ${at}` : `a cutoff of ${at}`;
@@ -46,12 +50,12 @@ export function answerTarget(target: BudgetTarget, context: TargetContext): Budg
   });
 }
 
-/** The edge, or why there is none. */
+/** The edge; why there is none; undefined where the search for it meets no end. */
 function edgeMeeting(
   rms: number,
   family: BudgetTarget["family"],
   { lines, pairs, fromHz, toHz, unit }: TargetContext,
-): { readonly hz: number } | string {
+): { readonly hz: number } | string | undefined {
   const noise = lines.filter((line) => isSpectrum(line.source) && line.gain !== 0);
   const fixed = lines.reduce((sum, line) => sum + (isSpectrum(line.source) ? 0 : line.power), 0);
   const left = rms * rms - fixed;
@@ -68,8 +72,7 @@ function edgeMeeting(
       ? bandEdgeFor(spectrum, wanted)
       : bandEdgeFor(filteredSpectrum(spectrum, weighting), { rms: wanted.rms, fromHz, toHz, family });
   } catch (error) {
-    if (error instanceof OutOfDomainError)
-      return family === undefined ? "no upper band edge gives it" : "no cutoff gives it";
+    if (error instanceof OutOfDomainError) return undefined;
     throw error;
   }
 }

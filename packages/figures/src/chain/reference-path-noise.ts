@@ -1,9 +1,9 @@
 import { bandNoise } from "@quietband/core";
 import { type NamedSpectrum, namedSpectrum } from "./named-spectrum.js";
-import { inputParts, type ReferenceInput } from "./reference-input.js";
 import { referencePathNotes } from "./reference-path-notes.js";
-import { checkReferencePath, type ReferencePathOptions, referenceAsUsed } from "./reference-path-options.js";
-import { aliasOf, groupError, oneSpectrum, type ReferencePart, seenParts, seenTotal } from "./seen-parts.js";
+import type { ReferencePathOptions } from "./reference-path-options.js";
+import { seeReference } from "./reference-spectrum.js";
+import { groupError, oneSpectrum, type ReferencePart, seenTotal } from "./seen-parts.js";
 
 /** Noise seen through a reference, in volts at the converter's input. */
 export interface ReferencePathNoise {
@@ -56,21 +56,18 @@ export interface ReferencePathNoise {
  * ```
  */
 export function referencePathNoise(options: ReferencePathOptions): ReferencePathNoise {
-  const rate = checkReferencePath(options);
-  const { spectrum, referenceVolts, fromHz, toHz, weighting, biasVolts = 0, leaveOutHz } = options;
-  const input = inputParts(sampledAt(options.input, rate));
-  const mean = input.mean + biasVolts;
-  const inputRms = Math.hypot(mean, input.alternatingRms);
-  const base = referenceAsUsed(options, rate);
+  const { base, mean, alternatingRms, seen, rate } = seeReference(options);
+  const { spectrum, referenceVolts, fromHz, toHz, weighting, leaveOutHz } = options;
+  const inputRms = Math.hypot(mean, alternatingRms);
   const band = { fromHz, toHz, weighting };
   // Around a tone, noise counts from leaveOutHz up; the mean brings it in from fromHz up.
   const lowest = mean === 0 && leaveOutHz !== undefined ? leaveOutHz : fromHz;
   const reference = bandNoise(base, { ...band, fromHz: lowest });
   const byRule = (inputRms / referenceVolts) * reference.rms;
-  const exact = input.lines !== undefined;
+  const exact = seen !== undefined;
   const notes = Object.freeze(referencePathNotes(options, { exact, beyond: reference.notes }));
   const shared = { unit: spectrum.unit, byRule, inputRms, referenceRms: reference.rms, notes };
-  if (input.lines === undefined)
+  if (seen === undefined)
     return Object.freeze({
       ...shared,
       rms: byRule,
@@ -79,12 +76,6 @@ export function referencePathNoise(options: ReferencePathOptions): ReferencePath
       ...(reference.standardUncertainty !== undefined && { standardUncertainty: reference.standardUncertainty }),
       parts: Object.freeze([]),
     });
-  const seen = seenParts(base, {
-    mean,
-    lines: rate === undefined ? input.lines : input.lines.map((line) => aliasOf(line, rate)),
-    referenceVolts,
-    leaveOutHz: (lineHz) => leaveOutHz ?? Math.min(fromHz, 0.5 * lineHz),
-  });
   return Object.freeze({
     ...shared,
     basis: "exact",
@@ -92,10 +83,4 @@ export function referencePathNoise(options: ReferencePathOptions): ReferencePath
     ...seenTotal(seen, band, rate === undefined ? groupError : 1),
     ...(seen.length > 0 && { spectrum: namedSpectrum(oneSpectrum(seen, base), "reference", notes) }),
   });
-}
-
-/** Samples without a rate of their own are the sampler's. */
-function sampledAt(input: ReferenceInput, rate: number | undefined): ReferenceInput {
-  if (input.kind !== "samples" || input.sampleRateHz !== undefined || rate === undefined) return input;
-  return { ...input, sampleRateHz: rate };
 }

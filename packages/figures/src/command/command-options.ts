@@ -75,7 +75,7 @@ function unknownOption(command: string, name: string, specs: readonly OptionSpec
   return `quietband ${command} takes no option --${name}.${meant}`;
 }
 
-/** The known word closest to a mistyped one, when it is close: at most a third of its letters off. */
+/** The known word closest to a mistyped one, when it is close: two letters off, or a third of them. */
 export function nearest(word: string, known: readonly string[]): string | undefined {
   let best: string | undefined;
   let least = Number.POSITIVE_INFINITY;
@@ -83,7 +83,7 @@ export function nearest(word: string, known: readonly string[]): string | undefi
     const far = lettersApart(word, candidate);
     if (far < least) [best, least] = [candidate, far];
   }
-  return least <= Math.max(1, word.length / 3) ? best : undefined;
+  return least <= Math.max(2, word.length / 3) ? best : undefined;
 }
 
 /** Levenshtein distance. */

@@ -428,3 +428,10 @@ describe("refusals say what to do", () => {
     expect(() => noiseBudget({ sources, fromHz: 0, toHz: 10 })).toThrow(/^Source "drifting": /);
   });
 });
+
+test("a gain beyond the range of numbers is refused, not turned into nothing or into infinity", () => {
+  for (const gain of [1e200, 1e-200])
+    expect(() => noiseBudget({ sources: [{ source: white(1e-9), name: "a", gain }], ...band })).toThrow(
+      /^Source "a": its gain/,
+    );
+});

@@ -1,0 +1,113 @@
+import { readFileSync } from "node:fs";
+import { describe, expect, test } from "vitest";
+import { runCommandLine } from "../../src/command/command-line.js";
+import { commands } from "../../src/command/commands.js";
+
+const demo = (name: string): string =>
+  readFileSync(new URL(`../../../../fixtures/demo/${name}`, import.meta.url), "utf8");
+
+/** Runs a line with files of the demonstration and remembers what it said. */
+function run(
+  words: readonly string[],
+  input = "",
+): { status: number; out: string; complaint: string; written: Map<string, string> } {
+  const said = { out: "", complaint: "" };
+  const written = new Map<string, string>();
+  const status = runCommandLine(words, commands, {
+    readInput: () => input,
+    readFile: demo,
+    writeFile: (path, text) => written.set(path, text),
+    print: (text) => {
+      said.out += text;
+    },
+    complain: (text) => {
+      said.complaint += text;
+    },
+  });
+  return { status, ...said, written };
+}
+
+describe("what it says when used wrongly: one line, status 2", () => {
+  test.each([
+    [["nosie"], /^quietband has no command nosie\. Did you mean noise\?\n$/],
+    [["noise", "R1.csv", "--bnd", "1Hz:2Hz"], /^quietband noise takes no option --bnd\. Did you mean --band\?\n$/],
+    [["noise", "R1.csv"], /needs a band: --band 0\.1Hz:10Hz/],
+    [["noise", "--band", "1Hz:2Hz"], /takes one curve: a file, or - for standard input; got 0/],
+    [["noise", "R1.csv", "--band"], /--band needs a value/],
+    [["fit", "R1.csv", "--json=yes"], /--json takes no value/],
+    [["fit", "R1.csv", "-j"], /Options begin with two dashes; got -j/],
+    [["noise", "R1.csv", "--band", "1Hz:2Hz", "--band", "1Hz:3Hz"], /may be given once only/],
+  ])("%o", (words, message) => {
+    const { status, out, complaint } = run(words);
+    expect(complaint).toMatch(message);
+    expect(complaint.trimEnd().split("\n")).toHaveLength(1);
+    expect([status, out]).toEqual([2, ""]);
+  });
+});
+
+describe("what it says to bad input: one line, status 1", () => {
+  test.each([
+    [["noise", "J1.csv", "--band", "0.1Hz:10Hz"], /for instance --below 1, or move fromHz up/],
+    [["noise", "R1.csv", "--band", "10Hz:1Hz"], /toHz|upper/],
+    [["noise", "R1.csv", "--band", "ten"], /Expected/],
+    [
+      ["noise", "R1.csv", "--band", "1Hz:2Hz", "--through", "Buterworth low-pass, order 2, 5 Hz"],
+      /did you mean "Butterworth low-pass"\?/,
+    ],
+    [["noise", "R1.csv", "--band", "1Hz:2Hz", "--through", "Butterworth low-pass, 5 Hz"], /order is missing/],
+    [
+      ["noise", "R1.csv", "--band", "1Hz:2Hz", "--through", "Butterworth low-pass, order 20, 5 Hz"],
+      /order must be a whole number from 1 to 12; got 20/,
+    ],
+    [["check", "-", "--figure", "quiet"], /./],
+    [["fit", "R1.csv", "--exponent", "steep"], /for --exponent; got "steep"/],
+  ])("%o", (words, message) => {
+    const { status, complaint } = run(words);
+    expect(complaint).toMatch(message);
+    expect(complaint.trimEnd().split("\n")).toHaveLength(1);
+    expect(status).toBe(1);
+  });
+});
+
+test("help lists every command, and each has its options and an example", () => {
+  expect(run(["--help"]).out).toContain("noise <curve>");
+  for (const { name, example } of commands) {
+    const { status, out } = run([name, "--help"]);
+    expect(status).toBe(0);
+    expect(out).toContain(example.type);
+  }
+});
+
+test("a curve may come from standard input, and JSON holds what the text says", () => {
+  const { status, out } = run(["noise", "-", "--band", "0.1Hz:10Hz", "--json"], demo("A1.csv"));
+  const { noise, figures } = JSON.parse(out) as { noise: { rms: number }; figures: { peakToPeak: { factor: number } } };
+  expect(status).toBe(0);
+  expect(Math.abs(noise.rms / 22.6e-9 - 1)).toBeLessThan(0.01);
+  expect(figures.peakToPeak.factor).toBe(6.6);
+});
+
+test("a filter in words, with its numbers in any order, is the filter", () => {
+  const one = run(["noise", "R1.csv", "--band", "0.1Hz:1kHz", "--through", "Butterworth low-pass, order 2, 5 Hz"]).out;
+  const other = run([
+    "noise",
+    "R1.csv",
+    "--band",
+    "0.1Hz:1kHz",
+    "--through",
+    "butterworth low-pass, cutoff 5Hz, order 2",
+  ]).out;
+  expect(one).toBe(other);
+  expect(one).toContain("through Butterworth low-pass, order 2, 5 Hz");
+});
+
+test("plot writes an SVG where it is told, or to standard output", () => {
+  const { written } = run(["plot", "R1.csv", "--to", "1kHz", "--output", "R1.svg"]);
+  expect(written.get("R1.svg")).toMatch(/^<svg /);
+  expect(run(["plot", "R1.csv", "--running", "--band", "0.1Hz:1kHz"]).out).toMatch(/^<svg /);
+});
+
+test("check compares every figure that a curve states", () => {
+  const { out } = run(["check", "R1.csv"]);
+  expect(out.match(/^Stated: /gm)).toHaveLength(2);
+  expect(out).toContain("claim");
+});
