@@ -1,6 +1,6 @@
 import { requireBand } from "../ground/domain.js";
 import { NoConvergenceError } from "../ground/errors.js";
-import { completeOptions } from "../ground/options.js";
+import { refuseUnknownKeys } from "../ground/options.js";
 import type { Spectrum } from "../spectrum/spectrum.js";
 import type { Weighting } from "../weighting/weighting.js";
 import { bandPower } from "./band-power.js";
@@ -44,6 +44,12 @@ export interface BandNoise {
   readonly notes: readonly string[];
 }
 
+const optionNames: readonly string[] = Object.freeze(["fromHz", "toHz", "weighting", "relativeTolerance"]);
+
+function isOption(key: string): boolean {
+  return key === "fromHz" || key === "toHz" || key === "weighting" || key === "relativeTolerance";
+}
+
 /** Relative tolerance on the power unless given; `numericalError` tells what was reached. */
 export const bandNoiseTolerance = 1e-12;
 
@@ -72,11 +78,9 @@ const noNotes: readonly string[] = Object.freeze([]);
  * ```
  */
 export function bandNoise(spectrum: Spectrum, options: BandNoiseOptions): BandNoise {
-  const { fromHz, toHz, weighting, relativeTolerance } = completeOptions<BandNoiseOptions>(
-    "bandNoise",
-    { fromHz: Number.NaN, toHz: Number.NaN, weighting: undefined, relativeTolerance: bandNoiseTolerance },
-    options,
-  );
+  // A sweep calls this a million times: keys are looked at without making a list of them.
+  for (const key in options) if (!isOption(key)) refuseUnknownKeys("bandNoise", optionNames, options);
+  const { fromHz, toHz, weighting, relativeTolerance } = options;
   requireBand(fromHz, toHz);
   requireConvergent(spectrum, weighting, fromHz, toHz);
   const tolerance = relativeTolerance ?? bandNoiseTolerance;
@@ -104,6 +108,7 @@ export function bandNoise(spectrum: Spectrum, options: BandNoiseOptions): BandNo
 
 /** What the spectrum assumes on a side counts only where the band reaches there. */
 function notesFor({ notes = noNotes }: Spectrum, { below, above }: BandNoise["outsidePoints"]): readonly string[] {
+  if (notes.length === 0) return noNotes;
   return Object.freeze(
     notes.filter((note) => (note.startsWith("Below ") ? below > 0 : note.startsWith("Above ") ? above > 0 : true)),
   );

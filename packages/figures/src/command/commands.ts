@@ -1,3 +1,4 @@
+import { budgetCommand } from "./budget.js";
 import { checkCommand } from "./check.js";
 import type { Command } from "./command.js";
 import { fitCommand } from "./fit.js";
@@ -5,4 +6,10 @@ import { noiseCommand } from "./noise.js";
 import { plotCommand } from "./plot.js";
 
 /** Every command, in the order a curve goes through them. */
-export const commands: readonly Command[] = Object.freeze([fitCommand, noiseCommand, checkCommand, plotCommand]);
+export const commands: readonly Command[] = Object.freeze([
+  fitCommand,
+  noiseCommand,
+  checkCommand,
+  plotCommand,
+  budgetCommand,
+]);

@@ -111,3 +111,12 @@ test("check compares every figure that a curve states", () => {
   expect(out.match(/^Stated: /gm)).toHaveLength(2);
   expect(out).toContain("claim");
 });
+
+test("budget ranks the sources of the invented strain channel: the amplifier decides", () => {
+  const { status, out } = run(["budget", "strain-channel.json"]);
+  expect(status).toBe(0);
+  expect(out).toMatch(/amplifier A1 .*87 %/);
+  const { written } = run(["budget", "strain-channel.json", "--output", "strain.svg"]);
+  expect(written.get("strain.svg")).toMatch(/^<svg /);
+  expect(run(["budget", "R1.csv"]).status).toBe(1);
+});
