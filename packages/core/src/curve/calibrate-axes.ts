@@ -57,6 +57,7 @@ export interface CalibratedAxes {
   readonly fit: AxisFit;
 }
 
+/** How far a tick or reference point lies from the fit. */
 export interface TickResidual {
   /** "frequency tick 2", "reference point 1"; counted from 1 in the order given. */
   readonly name: string;

@@ -1,25 +1,11 @@
+import { mergePieces } from "./merge-pieces.js";
 import { type PowerLawPiece, type PowerLawTerm, termAt } from "./power-law.js";
 
 /** Pieces of the product of two piecewise sums of power laws, on the intervals both have. */
 export function multiplyPieces(one: readonly PowerLawPiece[], other: readonly PowerLawPiece[]): PowerLawPiece[] {
-  const product: PowerLawPiece[] = [];
-  let i = 0;
-  let j = 0;
-  while (i < one.length && j < other.length) {
-    const a = one[i] as PowerLawPiece;
-    const b = other[j] as PowerLawPiece;
-    const from = Math.max(a.from, b.from);
-    const to = Math.min(a.to, b.to);
-    if (to > from)
-      product.push({
-        from,
-        to,
-        terms: a.terms.flatMap((term) => b.terms.map((by) => multiplyTerms(term, by, from, to))),
-      });
-    if (a.to <= b.to) i += 1;
-    if (b.to <= a.to) j += 1;
-  }
-  return product;
+  return mergePieces(one, other, (a, b, from, to) =>
+    a.terms.flatMap((term) => b.terms.map((by) => multiplyTerms(term, by, from, to))),
+  );
 }
 
 /** Anchored at the end of the overlap that holds most of its integral: far from it a steep exponent would lose digits. */
