@@ -8,20 +8,24 @@ export { type RunningNoise, type RunningNoiseOptions, runningNoise } from "./ban
 export { type SpectralMoment, spectralMoment } from "./band/spectral-moment.js";
 export type { UncertaintyPart } from "./band/uncertainty.js";
 export { assumedPointUncertainty } from "./curve/assumed-point-uncertainty.js";
+export type { Pixel } from "./curve/axis-fit.js";
 export {
   type AxesCalibration,
   type AxesDescription,
   type AxisDescription,
+  type CalibratedAxes,
   calibrateAxes,
   type ReferencePoint,
   type TickResidual,
 } from "./curve/calibrate-axes.js";
 export type { CommonEffect, Curve, CurvePoint, CurveSourceEntry } from "./curve/curve.js";
 export { type CurveOptions, curveFromPoints, type GivenPoint } from "./curve/curve-from-points.js";
+export type { AxisKind } from "./curve/plot-axis.js";
 export { type PathOptions, pointsFromPath } from "./curve/points-from-path.js";
 export { type PicksOptions, pointsFromPicks } from "./curve/points-from-picks.js";
 export { type ReadCurveOptions, readCurve } from "./curve/read-curve.js";
 export { thinCurve } from "./curve/thin-curve.js";
+export type { AxisTick } from "./curve/tick-consistency.js";
 export { writeCurve } from "./curve/write-curve.js";
 export type { FitAlternative } from "./fit/choose.js";
 export { type FitResidual, type FittedCurve, fitCurve } from "./fit/fit-curve.js";
