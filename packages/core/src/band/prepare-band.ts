@@ -27,8 +27,8 @@ export interface PreparedBand {
  * through one filter.
  *
  * The gain is integrated against polynomials in ln f on a few equal panels and becomes the weights of a fixed rule
- * Σ w_i·S(f_i), however many lobes or poles it has. A sum of power laws with exponents from −{@link panelExponentLimit} to
- * +{@link panelExponentLimit} over the whole band costs about one multiplication a node and is right to 1e-13; any other
+ * Σ w_i·S(f_i), however many lobes or poles it has. A sum of power laws with exponents from −4 to
+ * +4 over the whole band costs about one multiplication a node and is right to 1e-13; any other
  * spectrum goes the way of `bandNoise`, with its bound.
  *
  * @param weighting - any weighting; undefined for a brick wall.

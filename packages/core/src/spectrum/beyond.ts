@@ -12,7 +12,7 @@ import { refuseUnknownKeys } from "../ground/options.js";
  * - a number: the power density goes on from the last point as f^−exponent.
  * - `{ exponent, standardUncertainty }`: the same; the exponent's uncertainty joins the result's.
  *
- * A bare exponent carries ± {@link assumedExponentUncertainty} (k = 1), which the note says: going on below a hand-read
+ * A bare exponent carries ± 0.15 (k = 1), which the note says: going on below a hand-read
  * curve with exponent 1 ± 0.15 is far safer than with its last two points, which scatter by 8 %.
  */
 export type BeyondSide =
