@@ -2,7 +2,7 @@ import type { Curve } from "../curve/curve.js";
 import { OutOfDomainError } from "../ground/errors.js";
 import { completeOptions } from "../ground/options.js";
 import type { Spectrum } from "../spectrum/spectrum.js";
-import { chooseModel, type FitAlternative, type Tried, tryModel } from "./choose.js";
+import { chooseModel, type FitAlternative, type Tried, trialsOf } from "./choose.js";
 import { type FitModelName, type FitOptions, resolveExponent } from "./fit-options.js";
 import { choosePoints, type FitPoints, type LeftOutPoint } from "./fit-points.js";
 import { fittedSpectrum } from "./fitted-spectrum.js";
@@ -102,12 +102,12 @@ export function fitCurve(curve: Curve, options: FitOptions = {}): FittedCurve {
   requireOneOf("misreadings", ["report", "downweight"], misreadings);
   const resolved = resolveExponent(exponent);
   const points = choosePoints(curve, fromHz ?? 0, toHz ?? Number.POSITIVE_INFINITY);
-  const suspected = findMisreadings(resolved, points);
+  const plain = trialsOf(resolved, points);
+  const suspected = findMisreadings(plain, points);
   const trust = misreadings === "downweight" && suspected.length > 0 ? trustWithout(points, suspected) : undefined;
+  const trial = trust === undefined ? plain : trialsOf(resolved, points, trust);
   const { chosen, alternatives } =
-    model === "auto" || model === undefined
-      ? chooseModel(resolved, points, trust)
-      : { chosen: tryModel(model, resolved, points, trust), alternatives: [] };
+    model === "auto" || model === undefined ? chooseModel(trial, points) : { chosen: trial(model), alternatives: [] };
   const used = chosen.fit;
   const degrees = used.degrees - (trust === undefined ? 0 : suspected.length);
   const perDegree = degrees > 0 ? used.chiSquare / degrees : 0;

@@ -1,5 +1,6 @@
 import type { Curve, CurvePoint } from "../curve/curve.js";
 import { OutOfDomainError } from "../ground/errors.js";
+import { arrayBlock } from "../numerics/array-block.js";
 
 /** The points that take part in a fit, in logarithms. */
 export interface FitPoints {
@@ -37,13 +38,13 @@ export function choosePoints(curve: Curve, fromHz: number, toHz: number): FitPoi
     throw new OutOfDomainError(
       `A fit needs at least two points; ${fromHz} Hz to ${toHz} Hz holds ${points.length} that are not set aside; widen fromHz and toHz.`,
     );
-  return {
-    points,
-    x: Float64Array.from(points, ({ frequency }) => Math.log(frequency)),
-    y: Float64Array.from(points, ({ density }) => Math.log(density)),
-    weight: Float64Array.from(points, ({ uncertainty }) => 1 / uncertainty),
-    leftOut,
-  };
+  const [x, y, weight] = arrayBlock([points.length, points.length, points.length]);
+  for (const [i, { frequency, density, uncertainty }] of points.entries()) {
+    x[i] = Math.log(frequency);
+    y[i] = Math.log(density);
+    weight[i] = 1 / uncertainty;
+  }
+  return { points, x, y, weight, leftOut };
 }
 
 function reasonToLeaveOut(
