@@ -27,11 +27,21 @@ export { type ReadCurveOptions, readCurve } from "./curve/read-curve.js";
 export { thinCurve } from "./curve/thin-curve.js";
 export type { AxisTick } from "./curve/tick-consistency.js";
 export { writeCurve } from "./curve/write-curve.js";
+export type { BandFigure, SpotDensity } from "./fit/band-figure.js";
 export type { FitAlternative } from "./fit/choose.js";
+export type { CornerLimit } from "./fit/figure-limits.js";
+export {
+  type BandFiguresFit,
+  type BandFiguresOptions,
+  type FigureCost,
+  type FigureResidual,
+  fitBandFigures,
+} from "./fit/fit-band-figures.js";
 export { type FitResidual, type FittedCurve, fitCurve } from "./fit/fit-curve.js";
 export type { ExponentPrior, FitModelName, FitOptions } from "./fit/fit-options.js";
 export type { LeftOutPoint } from "./fit/fit-points.js";
 export type { FitFinding } from "./fit/judge.js";
+export type { FigureFinding } from "./fit/judge-figures.js";
 export type { Misreading } from "./fit/misreadings.js";
 export {
   DivergentIntegralError,

@@ -131,7 +131,7 @@ function descend(
 
 /** After a step that lowered nothing: whether there is nothing lower in any direction, to the last digit. */
 function nothingLower(damping: number, small: boolean, lost: boolean): boolean {
-  return damping < 1 ? lost : small && damping > 1e8;
+  return damping < 1 ? small || lost : small && damping > 1e8;
 }
 
 /** A promised gain below this share of the sum of squares is lost in its rounding. */
