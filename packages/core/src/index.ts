@@ -31,6 +31,12 @@ export type { BandFigure, SpotDensity } from "./fit/band-figure.js";
 export type { FitAlternative } from "./fit/choose.js";
 export type { CornerLimit } from "./fit/figure-limits.js";
 export {
+  type FitAgainstPoints,
+  type FitAgainstPointsOptions,
+  fitAgainstPoints,
+  type HeavyPoint,
+} from "./fit/fit-against-points.js";
+export {
   type BandFiguresFit,
   type BandFiguresOptions,
   type FigureCost,
@@ -56,6 +62,7 @@ export { type Quantity, type ReadQuantityOptions, readQuantity } from "./ground/
 export { type WriteQuantityOptions, writeQuantity } from "./ground/write-quantity.js";
 export type { PowerLawPiece, PowerLawTerm } from "./numerics/power-law.js";
 export type { Beyond, BeyondSide } from "./spectrum/beyond.js";
+export { type DensityIntervalOptions, type DensityRange, densityInterval } from "./spectrum/density-interval.js";
 export { type FunctionSpectrumOptions, functionSpectrum } from "./spectrum/function-spectrum.js";
 export { polyline } from "./spectrum/polyline.js";
 export { type PowerLaw, powerLaws } from "./spectrum/power-laws.js";

@@ -1,6 +1,7 @@
 import type { Curve } from "../curve/curve.js";
 import { OutOfDomainError } from "../ground/errors.js";
 import { completeOptions } from "../ground/options.js";
+import { coverageFactor } from "../numerics/coverage-factor.js";
 import type { Spectrum } from "../spectrum/spectrum.js";
 import { chooseModel, type FitAlternative, type Tried, trialsOf } from "./choose.js";
 import { type FitModelName, type FitOptions, resolveExponent } from "./fit-options.js";
@@ -34,6 +35,8 @@ export interface FittedCurve extends Spectrum {
     readonly cornerHz: number | undefined;
     readonly exponent: number | undefined;
   };
+  /** From standard error to a 95 % interval, and why by that factor. */
+  readonly coverage: { readonly probability: 0.95; readonly k: number; readonly basis: string };
   readonly chiSquarePerDegree: number;
   readonly degreesOfFreedom: number;
   /** Every point of the curve, also those left out. */
@@ -128,6 +131,7 @@ export function fitCurve(curve: Curve, options: FitOptions = {}): FittedCurve {
     ...spectrum,
     ...figuresOf(used, covariance),
     model: used.model.name,
+    coverage: coverageOf(perDegree, degrees),
     chiSquarePerDegree: perDegree,
     degreesOfFreedom: degrees,
     residualsDb,
@@ -148,6 +152,18 @@ function trustWithout(points: FitPoints, suspected: readonly { readonly index: n
   const trust = new Float64Array(points.x.length).fill(1);
   for (const { index } of suspected) trust[index] = 0;
   return trust;
+}
+
+/** Known uncertainties take the normal factor; a scatter estimated from the residuals takes Student's. */
+function coverageOf(perDegree: number, degrees: number): FittedCurve["coverage"] {
+  const estimated = perDegree > 1;
+  return Object.freeze({
+    probability: 0.95,
+    k: coverageFactor(0.95, estimated ? degrees : Number.POSITIVE_INFINITY),
+    basis: estimated
+      ? `Student's factor for ${degrees} degrees of freedom: the scatter is estimated from the residuals`
+      : "normal factor: the points scatter no more than their uncertainty says",
+  });
 }
 
 function widened(covariance: RefinedFit["covariance"], factor: number): RefinedFit["covariance"] {

@@ -83,7 +83,7 @@ function costs({ rounding, costs: all }: Judged): FigureFinding[] {
   if (largest?.cornerHz !== undefined && largest.cornerHz > 0.1)
     findings.push({
       code: "largest-cost",
-      message: `What costs the corner most is the ${largest.cause} of ${largest.figure}: ${short(100 * largest.cornerHz)} % (k = 1).`,
+      message: `What costs the corner most is the ${largest.cause} of the ${largest.figure}: ${short(100 * largest.cornerHz)} % (k = 1).`,
     });
   return findings;
 }

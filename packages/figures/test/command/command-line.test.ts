@@ -120,3 +120,21 @@ test("budget ranks the sources of the invented strain channel: the amplifier dec
   expect(written.get("strain.svg")).toMatch(/^<svg /);
   expect(run(["budget", "R1.csv"]).status).toBe(1);
 });
+
+describe("quietband fit", () => {
+  test("prints standard errors, the factor of their 95 % interval, and the noise of a band both ways", () => {
+    const { status, out } = run(["fit", "R1.csv", "--to", "1kHz", "--band", "0.1Hz:10Hz"]);
+    expect(status).toBe(0);
+    expect(out).toMatch(/floor +71\.60 nV\/√Hz +± 2\.\d % \(k = 1\); 95 % within a factor 1\.0\d+ \(k = 1\.96\)/);
+    expect(out).toMatch(/Noise of 0\.1Hz:10Hz\n +by the model +1\.2\d+ µV/);
+    expect(out).toMatch(/by straight lines through the points +1\.248 µV/);
+  });
+
+  test("says of suspects at the top that the curve may bend there", () => {
+    expect(run(["fit", "R1.csv"]).out).toMatch(/the curve may bend there .*; fit up to 4000 Hz\?/);
+  });
+});
+
+test("quietband plot draws the 95 % band of the model", () => {
+  expect(run(["plot", "R1.csv", "--to", "1kHz"]).out).toContain("95 % of the model");
+});
