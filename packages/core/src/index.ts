@@ -28,6 +28,7 @@ export { thinCurve } from "./curve/thin-curve.js";
 export type { AxisTick } from "./curve/tick-consistency.js";
 export { writeCurve } from "./curve/write-curve.js";
 export type { BandFigure, SpotDensity } from "./fit/band-figure.js";
+export type { Bump } from "./fit/bump.js";
 export type { FitAlternative } from "./fit/choose.js";
 export type { CornerLimit } from "./fit/figure-limits.js";
 export {

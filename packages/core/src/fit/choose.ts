@@ -50,12 +50,15 @@ export function trialsOf(exponent: ResolvedExponent, points: FitPoints, trust?: 
 export function chooseModel(
   trial: Trials,
   points: FitPoints,
+  excluded: readonly FitModelName[] = [],
 ): { readonly chosen: Tried; readonly alternatives: readonly FitAlternative[] } {
   const single: readonly [Tried, Tried] = [trial("floor"), trial("flicker")];
   const double = [trial("floorAndFlicker")];
   const triple =
     points.x.length >= 8
-      ? (["floorFlickerRandomWalk", "floorFlickerLorentzian", "floorFlickerRise"] as const).map(trial)
+      ? (["floorFlickerRandomWalk", "floorFlickerLorentzian", "floorFlickerRise"] as const)
+          .filter((name) => !excluded.includes(name))
+          .map(trial)
       : [];
   const all = [...single, ...double, ...triple];
   const spread = spreadOf(all);

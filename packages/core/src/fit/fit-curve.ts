@@ -3,6 +3,7 @@ import { OutOfDomainError } from "../ground/errors.js";
 import { completeOptions } from "../ground/options.js";
 import { coverageFactor } from "../numerics/coverage-factor.js";
 import type { Spectrum } from "../spectrum/spectrum.js";
+import { requireBump, withBump } from "./bump.js";
 import { chooseModel, type FitAlternative, type Tried, trialsOf } from "./choose.js";
 import { type FitModelName, type FitOptions, resolveExponent } from "./fit-options.js";
 import { choosePoints, type FitPoints, type LeftOutPoint } from "./fit-points.js";
@@ -56,6 +57,7 @@ const fitDefaults: FitOptions = Object.freeze({
   fromHz: 0,
   toHz: Number.POSITIVE_INFINITY,
   misreadings: "report",
+  bump: undefined,
   beyond: "refuse",
 });
 
@@ -96,7 +98,7 @@ const modelNames: readonly string[] = Object.freeze([
  * ```
  */
 export function fitCurve(curve: Curve, options: FitOptions = {}): FittedCurve {
-  const { model, exponent, fromHz, toHz, misreadings, beyond } = completeOptions<FitOptions>(
+  const { model, exponent, fromHz, toHz, misreadings, bump, beyond } = completeOptions<FitOptions>(
     "fitCurve",
     fitDefaults,
     options,
@@ -104,18 +106,22 @@ export function fitCurve(curve: Curve, options: FitOptions = {}): FittedCurve {
   requireOneOf("model", modelNames, model);
   requireOneOf("misreadings", ["report", "downweight"], misreadings);
   const resolved = resolveExponent(exponent);
-  const points = choosePoints(curve, fromHz ?? 0, toHz ?? Number.POSITIVE_INFINITY);
+  if (bump !== undefined) requireBump(curve, bump);
+  const points = choosePoints(curve, fromHz ?? 0, toHz ?? Number.POSITIVE_INFINITY, bump);
   const plain = trialsOf(resolved, points);
   const suspected = findMisreadings(plain, points);
   const trust = misreadings === "downweight" && suspected.length > 0 ? trustWithout(points, suspected) : undefined;
   const trial = trust === undefined ? plain : trialsOf(resolved, points, trust);
   const { chosen, alternatives } =
-    model === "auto" || model === undefined ? chooseModel(trial, points) : { chosen: trial(model), alternatives: [] };
+    model === "auto" || model === undefined
+      ? chooseModel(trial, points, bump === undefined ? [] : ["floorFlickerLorentzian"])
+      : { chosen: trial(model), alternatives: [] };
   const used = chosen.fit;
   const degrees = used.degrees - (trust === undefined ? 0 : suspected.length);
   const perDegree = degrees > 0 ? used.chiSquare / degrees : 0;
   const covariance = widened(used.covariance, Math.max(1, perDegree));
-  const spectrum = fittedSpectrum(curve, points, used, covariance, beyond ?? "refuse");
+  const plainSpectrum = fittedSpectrum(curve, points, used, covariance, beyond ?? "refuse");
+  const spectrum = bump === undefined ? plainSpectrum : withBump(plainSpectrum, curve, bump);
   const residualsDb = residualsOf(curve, points, used);
   const found = suspected.map(({ misreading }) => misreading);
   const findings = judgeFit({

@@ -1,6 +1,7 @@
 import type { Curve, CurvePoint } from "../curve/curve.js";
 import { OutOfDomainError } from "../ground/errors.js";
 import { arrayBlock } from "../numerics/array-block.js";
+import type { Bump } from "./bump.js";
 
 /** The points that take part in a fit, in logarithms. */
 export interface FitPoints {
@@ -19,10 +20,10 @@ export interface FitPoints {
 export interface LeftOutPoint {
   readonly frequency: number;
   readonly line?: number;
-  readonly why: "aside" | "below fromHz" | "above toHz";
+  readonly why: "aside" | "bump" | "below fromHz" | "above toHz";
 }
 
-export function choosePoints(curve: Curve, fromHz: number, toHz: number): FitPoints {
+export function choosePoints(curve: Curve, fromHz: number, toHz: number, bump?: Bump): FitPoints {
   if (!(fromHz >= 0 && toHz > fromHz))
     throw new OutOfDomainError(
       `The range of a fit must run from fromHz up to a higher toHz, in Hz; got ${fromHz} to ${toHz}.`,
@@ -30,7 +31,7 @@ export function choosePoints(curve: Curve, fromHz: number, toHz: number): FitPoi
   const points: CurvePoint[] = [];
   const leftOut: LeftOutPoint[] = [];
   for (const point of curve.points) {
-    const why = reasonToLeaveOut(point, fromHz, toHz);
+    const why = isIn(point, bump) ? "bump" : reasonToLeaveOut(point, fromHz, toHz);
     if (why === undefined) points.push(point);
     else leftOut.push({ frequency: point.frequency, why, ...(point.line !== undefined && { line: point.line }) });
   }
@@ -45,6 +46,10 @@ export function choosePoints(curve: Curve, fromHz: number, toHz: number): FitPoi
     weight[i] = 1 / uncertainty;
   }
   return { points, x, y, weight, leftOut };
+}
+
+function isIn({ frequency }: CurvePoint, bump: Bump | undefined): boolean {
+  return bump !== undefined && frequency >= bump.fromHz && frequency <= bump.toHz;
 }
 
 function reasonToLeaveOut(

@@ -24,7 +24,7 @@ export function fittedSpectrum(
   covariance: readonly (readonly number[])[] | undefined,
   beyond: Beyond,
 ): Spectrum {
-  const span = [points.points[0]?.frequency ?? 1, points.points.at(-1)?.frequency ?? 1] as const;
+  const span = spanOf(points);
   const sides = sidesOf(beyond);
   const axis = curve.commonUncertainty > 0 ? [commonSensitivity("axis", curve.commonUncertainty)] : [];
   const sensitivities =
@@ -36,6 +36,13 @@ export function fittedSpectrum(
           ...sharedSensitivities(curve, points, fit, span, sides),
         ];
   return modelSpectrum(curve.unit, span, fit, { beyond, sensitivities, what: "fitted points" });
+}
+
+/** From the first point that counts to the last, those of a bump among them. */
+function spanOf({ points, leftOut }: FitPoints): readonly [number, number] {
+  const bump = leftOut.filter(({ why }) => why === "bump").map(({ frequency }) => frequency);
+  const all = [points[0]?.frequency ?? 1, points.at(-1)?.frequency ?? 1, ...bump];
+  return [Math.min(...all), Math.max(...all)];
 }
 
 /** The spectrum of a model that stated figures gave, over the frequencies that they span. */

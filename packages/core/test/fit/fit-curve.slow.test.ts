@@ -56,7 +56,7 @@ test("95 % intervals cover what they say: independent log-normal scatter, right 
       }),
     ];
     for (const [index, deviation] of deviations.entries())
-      if (Math.abs(deviation) <= 1.959964) inside[index] = (inside[index] ?? 0) + 1;
+      if (Math.abs(deviation) <= fit.coverage.k) inside[index] = (inside[index] ?? 0) + 1;
     for (const { residualDb } of fit.residualsDb) {
       residualSum += residualDb / (scatter * 8.685889638);
       residualCount += 1;

@@ -33,6 +33,11 @@ export const fitCommand: Command = {
     },
     { name: "downweight", value: "", help: "give grossly misread points no weight" },
     {
+      name: "bump",
+      value: "FROM:TO",
+      help: "a bump that no model describes: its points stand for themselves",
+    },
+    {
       name: "band",
       value: "FROM:TO",
       help: "also the noise of this band, by the model and by straight lines through the points",
@@ -55,6 +60,7 @@ export const fitCommand: Command = {
       fromHz: quantityOption(parsed, "from", "Hz"),
       toHz: quantityOption(parsed, "to", "Hz"),
       misreadings: parsed.has("downweight") ? "downweight" : undefined,
+      bump: parsed.one("bump") === undefined ? undefined : readBand(parsed.one("bump") ?? ""),
     });
     const typed = parsed.one("band");
     const band = typed === undefined ? undefined : fitAgainstPoints(curve, fit, { ...readBand(typed), beyond });

@@ -125,9 +125,15 @@ describe("quietband fit", () => {
   test("prints standard errors, the factor of their 95 % interval, and the noise of a band both ways", () => {
     const { status, out } = run(["fit", "R1.csv", "--to", "1kHz", "--band", "0.1Hz:10Hz"]);
     expect(status).toBe(0);
-    expect(out).toMatch(/floor +71\.60 nV\/√Hz +± 2\.\d % \(k = 1\); 95 % within a factor 1\.0\d+ \(k = 1\.96\)/);
+    expect(out).toMatch(/floor +71\.60 nV\/√Hz +± 3\.8 % \(k = 1\); 95 % within a factor 1\.08 \(k = 1\.96\)/);
     expect(out).toMatch(/Noise of 0\.1Hz:10Hz\n +by the model +1\.2\d+ µV/);
     expect(out).toMatch(/by straight lines through the points +1\.248 µV/);
+  });
+
+  test("leaves a bump to its own points", () => {
+    const { out } = run(["fit", "R1.csv", "--bump", "4kHz:20kHz", "--band", "1kHz:20kHz"]);
+    expect(out).toMatch(/Left out of the fit: 4000 Hz \(bump\), 12000 Hz \(bump\), 20000 Hz \(bump\)/);
+    expect(out).toMatch(/by the model +12\.41 µV/);
   });
 
   test("says of suspects at the top that the curve may bend there", () => {
