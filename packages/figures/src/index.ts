@@ -58,6 +58,11 @@ export { amplitudeRatioDb, amplitudeRatioFromDb } from "./convert/amplitude-rati
 export { type ConverterFigures, type ConverterFiguresOptions, converterFigures } from "./convert/converter-figures.js";
 export { crestFactor, crestFactorFor } from "./convert/crest-factor.js";
 export {
+  type ExpectedPeakToPeak,
+  type ExpectedPeakToPeakOptions,
+  expectedPeakToPeak,
+} from "./convert/expected-peak-to-peak.js";
+export {
   type ConverterScale,
   idealConverterSnrDb,
   leastSignificantBit,
@@ -77,6 +82,7 @@ export { type PeakToPeak, type PeakToPeakConvention, peakToPeak } from "./conver
 export { type GaussianShare, peakToPeakFactorFor } from "./convert/peak-to-peak-factor-for.js";
 export { powerRatioDb, powerRatioFromDb } from "./convert/power-ratio-db.js";
 export { type RangeOfNormals, rangeOfNormals } from "./convert/range-of-normals.js";
+export type { RecordCoupling } from "./convert/record-band.js";
 export { type ReferenceLimit, referenceLimitedSnrDb } from "./convert/reference-limited-snr-db.js";
 export type { Rms } from "./convert/rms.js";
 export {

@@ -12,10 +12,12 @@ export interface Bump {
   readonly toHz: number;
 }
 
-export function requireBump(curve: Curve, { fromHz, toHz }: Bump): void {
+export function requireBump(curve: Curve, bump: Bump | undefined): Bump | undefined {
+  if (bump === undefined) return undefined;
+  const { fromHz, toHz } = bump;
   requireBand(fromHz, toHz);
   const count = curve.points.filter(({ frequency }) => frequency >= fromHz && frequency <= toHz).length;
-  if (count > 0) return;
+  if (count > 0) return bump;
   throw new OutOfDomainError(
     `The bump from ${fromHz} Hz to ${toHz} Hz must hold at least one point of the curve; got none.`,
   );

@@ -106,8 +106,7 @@ export function fitCurve(curve: Curve, options: FitOptions = {}): FittedCurve {
   requireOneOf("model", modelNames, model);
   requireOneOf("misreadings", ["report", "downweight"], misreadings);
   const resolved = resolveExponent(exponent);
-  if (bump !== undefined) requireBump(curve, bump);
-  const points = choosePoints(curve, fromHz ?? 0, toHz ?? Number.POSITIVE_INFINITY, bump);
+  const points = choosePoints(curve, fromHz, toHz, requireBump(curve, bump));
   const plain = trialsOf(resolved, points);
   const suspected = findMisreadings(plain, points);
   const trust = misreadings === "downweight" && suspected.length > 0 ? trustWithout(points, suspected) : undefined;

@@ -23,7 +23,12 @@ export interface LeftOutPoint {
   readonly why: "aside" | "bump" | "below fromHz" | "above toHz";
 }
 
-export function choosePoints(curve: Curve, fromHz: number, toHz: number, bump?: Bump): FitPoints {
+export function choosePoints(
+  curve: Curve,
+  fromHz = 0,
+  toHz: number = Number.POSITIVE_INFINITY,
+  bump?: Bump,
+): FitPoints {
   if (!(fromHz >= 0 && toHz > fromHz))
     throw new OutOfDomainError(
       `The range of a fit must run from fromHz up to a higher toHz, in Hz; got ${fromHz} to ${toHz}.`,
