@@ -93,8 +93,12 @@ export {
 } from "./convert/rms-for-bits.js";
 export { rmsFromPeakToPeak } from "./convert/rms-from-peak-to-peak.js";
 export { shareOutside } from "./convert/share-outside.js";
-export { type CheckOptions, checkStatedFigure, type StatedFigureCheck } from "./judge/check-stated-figure.js";
+export type { BasisVerdict, FigureTolerance } from "./judge/basis-verdict.js";
+export type { CheckOptions, FigureBasis } from "./judge/check-options.js";
+export { checkStatedFigure, type StatedFigureCheck } from "./judge/check-stated-figure.js";
+export type { FigureView } from "./judge/figure-views.js";
 export { readStatedFigure, type StatedFigure } from "./judge/read-stated-figure.js";
+export type { Reconciler } from "./judge/reconcile.js";
 export { csvTable } from "./show/csv-table.js";
 export type { DensityInterval, DensityModel, DensityPlotOptions } from "./show/density-options.js";
 export { densityPlot } from "./show/density-plot.js";

@@ -109,7 +109,15 @@ test("plot writes an SVG where it is told, or to standard output", () => {
 test("check compares every figure that a curve states", () => {
   const { out } = run(["check", "R1.csv"]);
   expect(out.match(/^Stated: /gm)).toHaveLength(2);
-  expect(out).toContain("claim");
+  expect(out).toMatch(/Verdict: agrees with the range of one record of 10 s, .*; lower than 6\.6 × RMS, .*, by 13 %\./);
+  expect(out).toMatch(/would agree with a peak-to-peak factor of 5\.7\d in place of 6\.6, /);
+});
+
+test("check goes on where one of several figures lies beyond the points, and says so", () => {
+  const { status, out } = run(["check", "X1.csv", "--of", "5V", "--below", "1"]);
+  expect(status).toBe(0);
+  expect(out).toMatch(/Verdict: lower than the range of one record of 10 s, .*, by a factor 2\.0/);
+  expect(out).toMatch(/not checked: .*ends at 100000 Hz/);
 });
 
 test("budget ranks the sources of the invented strain channel: the amplifier decides", () => {

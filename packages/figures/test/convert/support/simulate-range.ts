@@ -17,6 +17,7 @@ export interface SimulatedRange {
   readonly mean: number;
   readonly standardDeviation: number;
   readonly records: number;
+  readonly ranges: readonly number[];
 }
 
 /**
@@ -30,6 +31,7 @@ export function simulateRange(recorder: SimulatedRecorder): SimulatedRange {
   const normal = normalValues(recorder.seed);
   const real = new Float64Array(length);
   const imaginary = new Float64Array(length);
+  const ranges: number[] = [];
   let count = 0;
   let mean = 0;
   let squares = 0;
@@ -48,13 +50,14 @@ export function simulateRange(recorder: SimulatedRecorder): SimulatedRange {
           if (value < low) low = value;
           if (value > high) high = value;
         }
+        ranges.push(high - low);
         count += 1;
         const off = high - low - mean;
         mean += off / count;
         squares += off * (high - low - mean);
       }
   }
-  return { mean, standardDeviation: Math.sqrt(squares / count), records: count };
+  return { mean, standardDeviation: Math.sqrt(squares / count), records: count, ranges };
 }
 
 /** Amplitude of each complex bin: real part and imaginary part of the series each get S(f)·Δf over both signs of f. */
