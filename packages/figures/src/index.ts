@@ -99,6 +99,8 @@ export { checkStatedFigure, type StatedFigureCheck } from "./judge/check-stated-
 export type { FigureView } from "./judge/figure-views.js";
 export { readStatedFigure, type StatedFigure } from "./judge/read-stated-figure.js";
 export type { Reconciler } from "./judge/reconcile.js";
+export { picksSchema } from "./pick/picks-schema.js";
+export { type PickedPlot, readPicks } from "./pick/read-picks.js";
 export { csvTable } from "./show/csv-table.js";
 export type { DensityInterval, DensityModel, DensityPlotOptions } from "./show/density-options.js";
 export { densityPlot } from "./show/density-plot.js";

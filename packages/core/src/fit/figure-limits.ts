@@ -1,5 +1,6 @@
 import { OutOfDomainError } from "../ground/errors.js";
 import { bracketedRoot } from "../numerics/bracketed-root.js";
+import { chiSquareLimit } from "../numerics/chi-square-limit.js";
 import type { FigureReading } from "./band-figure.js";
 import { defaultExponent, type ResolvedExponent } from "./fit-options.js";
 import { type SolvedFigures, solveFigures, weightOf } from "./solve-figures.js";
@@ -40,7 +41,7 @@ export function requirePossible(
 ): void {
   const degrees = solved.degrees;
   if (solved.model.name === "floorAndFlicker" || degrees < 1) return;
-  if (solved.chiSquare <= chiSquareQuantile(degrees)) return;
+  if (solved.chiSquare <= chiSquareLimit(degrees)) return;
   const { one, other, limits, ratio, uncertainty } = worstPair(expectedExponent(exponent), readings);
   const [least, most] = limits.toSorted((a, b) => a - b);
   throw new OutOfDomainError(
@@ -110,12 +111,6 @@ function worstPair(exponent: number, readings: readonly FigureReading[]) {
     }),
   );
   return pairs.reduce((worst, pair) => (pair.outside > worst.outside ? pair : worst));
-}
-
-/** 95 % quantile of χ² by Wilson and Hilferty (1931): 2 % low at one degree, better above; it only sorts out refusals. */
-function chiSquareQuantile(degrees: number): number {
-  const spread = 2 / (9 * degrees);
-  return degrees * (1 - spread + oneSided * Math.sqrt(spread)) ** 3;
 }
 
 function short(value: number): string {

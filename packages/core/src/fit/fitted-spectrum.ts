@@ -127,7 +127,7 @@ function sideOf(beyond: Beyond, side: "below" | "above"): "segments" | "other" {
 }
 
 function formulaNote(side: "below" | "above", edge: number, what: string): string {
-  return `${side === "below" ? "Below" : "Above"} ${edge} Hz there are no ${what}; the model's own formula goes on.`;
+  return `${side === "below" ? "Below" : "Above"} ${Number(edge.toPrecision(4))} Hz there are no ${what}; the model's own formula goes on.`;
 }
 
 function lawFrom(at: number, level: number, { exponent }: BeyondLaw): PowerLawTerm {

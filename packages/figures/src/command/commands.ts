@@ -4,9 +4,11 @@ import type { Command } from "./command.js";
 import { fitCommand } from "./fit.js";
 import { noiseCommand } from "./noise.js";
 import { plotCommand } from "./plot.js";
+import { readCommand } from "./read.js";
 
 /** Every command, in the order a curve goes through them. */
 export const commands: readonly Command[] = Object.freeze([
+  readCommand,
   fitCommand,
   noiseCommand,
   checkCommand,

@@ -120,6 +120,21 @@ test("check goes on where one of several figures lies beyond the points, and say
   expect(out).toMatch(/not checked: .*ends at 100000 Hz/);
 });
 
+test("read writes the table that noise reads, with the calibration's residuals as comments", () => {
+  const { status, out } = run(["read", "R1-picks.json"]);
+  expect(status).toBe(0);
+  expect(out).toMatch(/^# calibration: worst is .* pixels off/m);
+  const noise = run(["noise", "-", "--band", "0.1Hz:10Hz"], out);
+  expect(noise.out).toMatch(/RMS +1\.2\d\d µV +± 0\.\d % \(k = 1\)/);
+  const shown = JSON.parse(run(["read", "R1-picks.json", "--json"]).out) as {
+    readonly calibration: { readonly residuals: readonly unknown[] };
+  };
+  expect(shown.calibration.residuals).toHaveLength(11);
+  const { written } = run(["read", "R1-picks.json", "--output", "R1-read.csv"]);
+  expect(written.get("R1-read.csv")).toBe(out);
+  expect(run(["read"]).complaint).toMatch(/takes one picks file, or - for standard input; got 0/);
+});
+
 test("budget ranks the sources of the invented strain channel: the amplifier decides", () => {
   const { status, out } = run(["budget", "strain-channel.json"]);
   expect(status).toBe(0);
