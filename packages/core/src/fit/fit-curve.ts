@@ -159,12 +159,15 @@ function trustWithout(points: FitPoints, suspected: readonly { readonly index: n
   return trust;
 }
 
+/** coverageFactor(0.95, Infinity), which takes longer than a fit. */
+const normalFactor = 1.959963984540054;
+
 /** Known uncertainties take the normal factor; a scatter estimated from the residuals takes Student's. */
 function coverageOf(perDegree: number, degrees: number): FittedCurve["coverage"] {
   const estimated = perDegree > 1;
   return Object.freeze({
     probability: 0.95,
-    k: coverageFactor(0.95, estimated ? degrees : Number.POSITIVE_INFINITY),
+    k: estimated ? coverageFactor(0.95, degrees) : normalFactor,
     basis: estimated
       ? `Student's factor for ${degrees} degrees of freedom: the scatter is estimated from the residuals`
       : "normal factor: the points scatter no more than their uncertainty says",

@@ -1,3 +1,4 @@
+import { arrayBlock } from "../numerics/array-block.js";
 import { dampedLeastSquares } from "../numerics/damped-least-squares.js";
 import type { FitModel } from "./fit-model.js";
 import type { FitPoints } from "./fit-points.js";
@@ -7,7 +8,7 @@ import { firstStart, moreStarts } from "./start.js";
 const solverOptions = Object.freeze({
   damping: 1e-3,
   stepTolerance: 1e-14,
-  gainTolerance: 1e-13,
+  gainTolerance: 1e-11,
   mostSteps: 300,
   stallTolerance: 1e-13,
   mostStalled: 5,
@@ -147,17 +148,17 @@ function assembled(
 ): RefinedFit {
   const size = model.parameters.length;
   const count = x.length;
-  const slopes = new Float64Array(size);
   const means = new Float64Array(size);
-  const residuals = new Float64Array(count);
+  const [residuals, slopes] = arrayBlock([count, count * size]);
+  model.shapeOver(x, parameters, residuals, slopes);
   const square = squareOf(weight);
   let mean = 0;
   for (let i = 0; i < count; i += 1) {
     const share = (weight[i] as number) ** 2 / square;
-    const value = (y[i] as number) - 0.5 * model.shapeAt(x[i] as number, parameters, slopes);
+    const value = (y[i] as number) - 0.5 * (residuals[i] as number);
     residuals[i] = value;
     mean += share * value;
-    for (let p = 0; p < size; p += 1) means[p] = (means[p] as number) + share * (slopes[p] as number);
+    for (let p = 0; p < size; p += 1) means[p] = (means[p] as number) + share * (slopes[i * size + p] as number);
   }
   let chiSquare = 0;
   for (let i = 0; i < count; i += 1) {

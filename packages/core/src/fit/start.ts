@@ -5,6 +5,9 @@ import type { FitPoints } from "./fit-points.js";
 /** How many starts of the grid are refined; the others are only looked at. */
 const mostStarts = { twoTerms: 6, threeTerms: 2 };
 
+/** All pairs of so many points give a slope good enough to start from. */
+const mostForSlope = 12;
+
 /**
  * The first start: the slope at the low end by Theil and Sen (half of all points may be wrong), and floor and 1/f level by
  * weighted linear least squares in power for that exponent.
@@ -84,7 +87,14 @@ function fixedExponent({ exponent }: FitModel): number {
 function exponentAtLowEnd({ x, y }: FitPoints): number {
   const count = Math.max(3, Math.ceil(x.length / 3));
   if (x.length < 3) return 1;
-  const found = new TheilSenRegression(Array.from(x.subarray(0, count)), Array.from(y.subarray(0, count)));
+  const stride = Math.ceil(count / mostForSlope);
+  const [across, along]: [number[], number[]] = [[], []];
+  for (let i = 0; i < count; i += stride) {
+    across.push(x[i] as number);
+    along.push(y[i] as number);
+  }
+  if (across.length < 3) return 1;
+  const found = new TheilSenRegression(across, along);
   return Math.min(Math.max(-2 * found.slope, 0.3), 3);
 }
 
