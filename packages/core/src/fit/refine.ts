@@ -8,7 +8,7 @@ import { firstStart, moreStarts } from "./start.js";
 const solverOptions = Object.freeze({
   damping: 1e-3,
   stepTolerance: 1e-14,
-  gainTolerance: 1e-11,
+  gainTolerance: 1e-13,
   mostSteps: 300,
   stallTolerance: 1e-13,
   mostStalled: 5,
