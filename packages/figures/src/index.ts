@@ -13,6 +13,7 @@ export type {
   NoiseBudgetOptions,
 } from "./chain/budget-options.js";
 export type { BudgetPeakToPeak, BudgetShare, BudgetTargetAnswer, NoiseBudget } from "./chain/budget-result.js";
+export type { Candidate } from "./chain/candidate.js";
 export { chainSchema } from "./chain/chain-schema.js";
 export {
   type CandidateParts,
@@ -22,7 +23,6 @@ export {
   type ResistanceRow,
 } from "./chain/compare-against-resistance.js";
 export {
-  type Candidate,
   type CandidateRow,
   type CompareCurvesOptions,
   type ComparisonPath,
@@ -89,6 +89,7 @@ export { rmsFromPeakToPeak } from "./convert/rms-from-peak-to-peak.js";
 export { shareOutside } from "./convert/share-outside.js";
 export { type CheckOptions, checkStatedFigure, type StatedFigureCheck } from "./judge/check-stated-figure.js";
 export { readStatedFigure, type StatedFigure } from "./judge/read-stated-figure.js";
+export { type CandidatesPlotOptions, candidatesPlot } from "./show/candidates-plot.js";
 export { csvTable } from "./show/csv-table.js";
 export type { DensityInterval, DensityModel, DensityPlotOptions } from "./show/density-options.js";
 export { densityPlot } from "./show/density-plot.js";
