@@ -13,6 +13,7 @@ export type {
   NoiseBudgetOptions,
 } from "./chain/budget-options.js";
 export type { BudgetPeakToPeak, BudgetShare, BudgetTargetAnswer, NoiseBudget } from "./chain/budget-result.js";
+export type { Candidate } from "./chain/candidate.js";
 export { chainSchema } from "./chain/chain-schema.js";
 export {
   type CandidateParts,
@@ -22,7 +23,6 @@ export {
   type ResistanceRow,
 } from "./chain/compare-against-resistance.js";
 export {
-  type Candidate,
   type CandidateRow,
   type CompareCurvesOptions,
   type ComparisonPath,
@@ -101,14 +101,17 @@ export { readStatedFigure, type StatedFigure } from "./judge/read-stated-figure.
 export type { Reconciler } from "./judge/reconcile.js";
 export { picksSchema } from "./pick/picks-schema.js";
 export { type PickedPlot, readPicks } from "./pick/read-picks.js";
+export { type CandidatesPlotOptions, candidatesPlot } from "./show/candidates-plot.js";
 export { csvTable } from "./show/csv-table.js";
 export type { DensityInterval, DensityModel, DensityPlotOptions } from "./show/density-options.js";
 export { densityPlot } from "./show/density-plot.js";
 export type { LinePlotAxis, LinePlotOptions, PlotMark, PlotSeries } from "./show/line-options.js";
 export { linePlot } from "./show/line-plot.js";
 export { markdownTable } from "./show/markdown-table.js";
+export { type ReferenceByUse, type ReferenceUsePlotOptions, referenceUsePlot } from "./show/reference-use-plot.js";
 export { type ResidualRow, residualBars } from "./show/residual-bars.js";
 export { type RunningNoiseCurve, type RunningNoisePlotOptions, runningNoisePlot } from "./show/running-noise-plot.js";
 export { type ShareBarsOptions, type ShareRow, shareBars } from "./show/share-bars.js";
+export { type SkirtPlotOptions, type SkirtReference, skirtPlot } from "./show/skirt-plot.js";
 export type { Table, TableCell, TableColumn } from "./show/table.js";
 export { textTable } from "./show/text-table.js";

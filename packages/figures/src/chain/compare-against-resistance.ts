@@ -1,6 +1,7 @@
 import { bandNoise, OutOfDomainError, powerLaws } from "@quietband/core";
 import { refuseUnknownKeys, requireNotNegative } from "../convert/domain.js";
-import { type Candidate, type ComparisonPath, namedCandidates } from "./compare-curves.js";
+import type { Candidate } from "./candidate.js";
+import { type ComparisonPath, namedCandidates } from "./compare-curves.js";
 import { boltzmannConstant } from "./physical-constants.js";
 import { resolveTemperature } from "./temperature.js";
 

@@ -1,28 +1,9 @@
-import {
-  type BandNoise,
-  bandNoise,
-  OutOfDomainError,
-  type Spectrum,
-  scaleSpectrum,
-  sumSpectra,
-  type Weighting,
-} from "@quietband/core";
+import { type BandNoise, bandNoise, OutOfDomainError, type Weighting, writeQuantity } from "@quietband/core";
 import { refuseUnknownKeys, requireNotNegative, requirePositive, shown } from "../convert/domain.js";
+import type { Candidate } from "./candidate.js";
+import { candidateSpectrum } from "./candidate-spectrum.js";
 import type { NamedSpectrum } from "./named-spectrum.js";
 import { resolveTemperature, type Temperature } from "./temperature.js";
-import { thermalNoise } from "./thermal-noise.js";
-
-/** A part that may be chosen. */
-export interface Candidate {
-  /** For reports; the spectrum's own name unless given. Names must differ. */
-  readonly name?: string | undefined;
-  /** Its noise: voltage noise of an amplifier, noise of a reference. */
-  readonly spectrum: Spectrum;
-  /** Current noise at its input, A²/Hz; it counts across the source resistance. */
-  readonly currentNoise?: Spectrum | undefined;
-  /** Amplitude gain that refers it to where candidates are compared, 1 unless given: 1/2.5 for a 2.5 V reference. */
-  readonly gain?: number | undefined;
-}
 
 /** The path that all candidates are compared through. */
 export interface ComparisonPath extends Temperature {
@@ -102,7 +83,7 @@ export function compareCurves(candidates: readonly Candidate[], options: Compare
   for (const hz of spotsHz) requirePositive("Each of spotsHz", hz, "Hz");
   const named = namedCandidates(candidates);
   const measured = named.map(({ name, candidate }) => {
-    const spectrum = withSource(candidate, sourceOhms, options);
+    const spectrum = candidateSpectrum(candidate, options);
     const found = bandNoise(spectrum, { fromHz, toHz, weighting });
     const assumptions = (candidate.spectrum as Partial<NamedSpectrum>).assumptions ?? [];
     return { name, spectrum, found, notes: Object.freeze([...assumptions, ...found.notes]) };
@@ -133,7 +114,9 @@ export function compareCurves(candidates: readonly Candidate[], options: Compare
     notes: Object.freeze(
       sourceOhms === 0
         ? []
-        : [`Source of ${sourceOhms} Ω at ${resolveTemperature(options).words}, its thermal noise included.`],
+        : [
+            `Source of ${writeQuantity(sourceOhms, "Ω")} at ${resolveTemperature(options).words}, its thermal noise included.`,
+          ],
     ),
   });
 }
@@ -160,17 +143,6 @@ export function namedCandidates(
       );
     return { name, candidate };
   });
-}
-
-function withSource(
-  { spectrum, currentNoise, gain = 1 }: Candidate,
-  ohms: number,
-  { kelvin, celsius }: Temperature,
-): Spectrum {
-  const own = gain === 1 ? spectrum : scaleSpectrum(spectrum, gain);
-  if (ohms === 0) return own;
-  const across = currentNoise === undefined ? [] : [scaleSpectrum(currentNoise, ohms, { unit: own.unit })];
-  return sumSpectra(own, ...across, thermalNoise({ ohms, kelvin, celsius }));
 }
 
 function tied(one: BandNoise, best: BandNoise): boolean {

@@ -1,6 +1,7 @@
 import { budgetCommand } from "./budget.js";
 import { checkCommand } from "./check.js";
 import type { Command } from "./command.js";
+import { compareCommand } from "./compare.js";
 import { fitCommand } from "./fit.js";
 import { noiseCommand } from "./noise.js";
 import { plotCommand } from "./plot.js";
@@ -13,5 +14,6 @@ export const commands: readonly Command[] = Object.freeze([
   noiseCommand,
   checkCommand,
   plotCommand,
+  compareCommand,
   budgetCommand,
 ]);

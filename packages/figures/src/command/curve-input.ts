@@ -25,8 +25,12 @@ export function readCurveInput(
       `quietband ${command} takes one curve: a file, or - for standard input; got ${parsed.files.length}.`,
     );
   const curve = readCurve(path === "-" ? streams.readInput() : streams.readFile(path));
-  const name = path === "-" ? "standard input" : (path.split(/[\\/]/).at(-1) ?? path).replace(/\.[^.]+$/, "");
-  return { curve, name: curve.label === "" ? name : curve.label };
+  return { curve, name: curve.label === "" ? fileTitle(path) : curve.label };
+}
+
+/** What a curve without a label is called: its file without folder and ending. */
+export function fileTitle(path: string): string {
+  return path === "-" ? "standard input" : (path.split(/[\\/]/).at(-1) ?? path).replace(/\.[^.]+$/, "");
 }
 
 export function readBeyond(parsed: ParsedOptions): Beyond {

@@ -12,10 +12,15 @@ import { ascent, fontFamily } from "./text-measure.js";
 /** An interval lets the grid and a shaded band show through. */
 const areaOpacity = 0.22;
 
-/** Draws a laid-out plot: nothing is decided here but the order of the ink. */
+/** Draws a laid-out plot. */
 export function inkPlot(layout: PlotLayout): string {
+  return picture(layout, plotInk(layout));
+}
+
+/** The ink of a laid-out plot: nothing is decided here but its order. */
+export function plotInk(layout: PlotLayout): readonly SvgElement[] {
   const { frame, key } = layout;
-  return picture(layout, [
+  return [
     ...layout.shades.map(({ box }) => svgElement("rect", { ...box, fill: ink.shade })),
     ...gridLines(frame),
     ...layout.shades.flatMap(({ box, edges }) =>
@@ -31,7 +36,7 @@ export function inkPlot(layout: PlotLayout): string {
     ...layout.labels.flatMap(labelInk),
     ...key.map(keyInk),
     ...frame.texts.map(textInk),
-  ]);
+  ];
 }
 
 /** The root of every picture: white paper, one font, a title and a description for those who listen. */

@@ -64,7 +64,8 @@ function axisPlan(
       throw new OutOfDomainError(`${what} is logarithmic and needs at least one finite value above zero; got none.`);
     return { kind: "log", domain: airedLog(range, air, 2), title, label: tickLabel(unit) };
   }
-  const range = finiteExtent(standing === "on zero" ? [0, ...values] : values);
+  // The zero of a level in dB is a convention, not an absence.
+  const range = finiteExtent(standing === "on zero" && !unit.startsWith("dB") ? [0, ...values] : values);
   if (range === undefined) throw new OutOfDomainError(`${what} needs at least one finite value; got none.`);
   return { kind: "linear", domain: airedLinear(range, air), title, label: evenTickLabel(unit) };
 }

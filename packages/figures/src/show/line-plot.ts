@@ -6,8 +6,8 @@ import type { LinePlotOptions } from "./line-options.js";
  * Lines over a common axis as an SVG document: anything against anything, each axis linear or logarithmic. What a
  * report draws besides densities: reference noise against input, a skirt, a two-sample deviation. Same input, same text.
  *
- * On a linear axis that shows only values of one sign the axis starts at zero. On a logarithmic axis zero and negative
- * values interrupt the line.
+ * On a linear axis that shows only values of one sign the axis starts at zero, but for levels in dB. On a logarithmic axis
+ * zero and negative values interrupt the line.
  *
  * @param options - see {@link LinePlotOptions}.
  * @returns the text of an SVG document.

@@ -167,3 +167,48 @@ describe("quietband fit", () => {
 test("quietband plot draws the 95 % band of the model", () => {
   expect(run(["plot", "R1.csv", "--to", "1kHz"]).out).toContain("95 % of the model");
 });
+interface Compared {
+  readonly comparison: {
+    readonly rows: readonly { readonly name: string; readonly rms: number }[];
+    readonly notes: readonly string[];
+  };
+}
+
+describe("compare", () => {
+  test("ranks curves through one path, draws them, and says what rests on assumption", () => {
+    const { status, out, written } = run([
+      "compare",
+      "J1.csv",
+      "A1.csv",
+      "--band",
+      "0.1Hz:10Hz",
+      "--below",
+      "1",
+      "--output",
+      "both.svg",
+    ]);
+    expect(status).toBe(0);
+    expect(out).toMatch(/1 +A1 +22\.60 nV/);
+    expect(out).toMatch(/2 +J1 +83\.15 nV .*× 3\.68 +48 %/);
+    expect(written.get("both.svg")).toMatch(/^<svg /);
+  });
+
+  test("a source of 10 kΩ adds its thermal noise and the current noise across it", () => {
+    const words = ["compare", "A1.csv", "J1.csv", "--band", "1Hz:1kHz", "--source", "10kΩ", "--json"];
+    const { out } = run([...words, "--current", "A1=0.5pA/√Hz", "--gain", "J1=2"]);
+    const { comparison } = JSON.parse(out) as Compared;
+    const { comparison: without } = JSON.parse(run(words).out) as Compared;
+    const rmsOf = ({ rows }: Compared["comparison"], name: string): number =>
+      rows.find((row) => row.name === name)?.rms ?? Number.NaN;
+    const current = Math.sqrt(rmsOf(comparison, "A1") ** 2 - rmsOf(without, "A1") ** 2);
+    expect(Math.abs(current / (0.5e-12 * 1e4 * Math.sqrt(999)) - 1)).toBeLessThan(1e-9);
+    expect(rmsOf(comparison, "J1")).toBeGreaterThan(rmsOf(without, "J1"));
+    expect(comparison.notes[0]).toBe("Source of 10 kΩ at 25 °C (assumed), its thermal noise included.");
+  });
+
+  test("a curve named twice is told apart by its path; a current for no curve is refused", () => {
+    expect(run(["compare", "R1.csv", "R1.csv", "--band", "1Hz:2Hz"]).complaint).toMatch(/different names/);
+    const { complaint, status } = run(["compare", "R1.csv", "--band", "1Hz:2Hz", "--current", "R2=1pA/√Hz"]);
+    expect([status, complaint]).toEqual([1, 'Expected --current for one of the curves, R1=...; got "R2=1pA/√Hz".\n']);
+  });
+});
