@@ -1,4 +1,6 @@
 import { adaptiveRule, type QuadratureRule } from "../numerics/adaptive.js";
+import { arrayBlock } from "../numerics/array-block.js";
+import { gaussLegendre } from "../numerics/gauss-legendre.js";
 import type { Sensitivity, Spectrum } from "../spectrum/spectrum.js";
 import type { Weighting } from "../weighting/weighting.js";
 import { productOf } from "./adaptive-route.js";
@@ -13,7 +15,8 @@ export interface UncertaintyPart {
  * Relative standard uncertainty of the rms from each group of parameters (JCGM 100, 5.2.2: u² = Σ Σ c_i c_j u_ij), with
  * c_k = d ln rms / d p_k = ½ ∫ S·|H|² · (d ln S/d p_k) df / ∫ S·|H|² df.
  *
- * The integrals share one rule, adapted to S·|H|² at 1e-6: an uncertainty needs no more digits.
+ * The integrals share one rule, good to 1e-6 of S·|H|²: an uncertainty needs no more digits. Power laws through a brick wall,
+ * a table or a filter without sharp resonances take a few fixed nodes a panel, anything else an adapted rule.
  */
 export function uncertaintyParts(
   spectrum: Spectrum,
@@ -83,5 +86,45 @@ function ruleFor(
   const low = fromHz === 0 ? Math.min(...finite) * 1e-8 : fromHz;
   const high = toHz === Number.POSITIVE_INFINITY ? Math.max(...finite) * 1e8 : toHz;
   const edges = [...new Set([low, ...knots, high])].toSorted((one, other) => one - other);
+  const width = spectrum.pieces === undefined ? 0 : smoothWidth(weighting);
+  if (width > leastWidth) return fixedRule(edges, Math.min(width, widest));
   return adaptiveRule(productOf(spectrum, weighting), edges, { relativeTolerance: 1e-6, mostHalvings: 400 });
+}
+
+/** Widest and narrowest panels of a fixed rule, in ln f: below the narrowest an adapted rule is cheaper. */
+const widest = 2;
+const leastWidth = 0.5;
+const legendre = gaussLegendre(8);
+
+/**
+ * Width of panels in ln f on which eight nodes hold 1e-6: twice the distance of the nearest pole of |H|² from the real axis
+ * there, which is its angle from the imaginary axis of s. 0 where nothing is known of its poles.
+ */
+function smoothWidth(weighting: Weighting | undefined): number {
+  if (weighting === undefined || weighting.pieces !== undefined) return Number.POSITIVE_INFINITY;
+  const { rational, saturating } = weighting;
+  if (saturating !== undefined) return Math.PI / saturating.order;
+  if (rational === undefined) return 0;
+  return 2 * Math.min(...rational.poles.map(({ re, im }) => Math.atan2(Math.abs(re), Math.abs(im))));
+}
+
+/** Gauss–Legendre in ln f between the edges, on panels no wider than told; df = f d ln f is in the weights. */
+function fixedRule(edges: readonly number[], width: number): QuadratureRule {
+  const logs = edges.map(Math.log);
+  const counts = logs.slice(1).map((to, index) => Math.max(1, Math.ceil((to - (logs[index] as number)) / width)));
+  const total = legendre.nodes.length * counts.reduce((sum, count) => sum + count, 0);
+  const [nodes, weights] = arrayBlock([total, total]);
+  let at = 0;
+  for (const [index, count] of counts.entries()) {
+    const from = logs[index] as number;
+    const half = ((logs[index + 1] as number) - from) / (2 * count);
+    for (let panel = 0; panel < count; panel += 1)
+      for (let k = 0; k < legendre.nodes.length; k += 1) {
+        const hz = Math.exp(from + half * (2 * panel + 1 + (legendre.nodes[k] as number)));
+        nodes[at] = hz;
+        weights[at] = half * (legendre.weights[k] as number) * hz;
+        at += 1;
+      }
+  }
+  return { nodes, weights };
 }
