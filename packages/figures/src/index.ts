@@ -101,6 +101,13 @@ export { readStatedFigure, type StatedFigure } from "./judge/read-stated-figure.
 export type { Reconciler } from "./judge/reconcile.js";
 export { picksSchema } from "./pick/picks-schema.js";
 export { type PickedPlot, readPicks } from "./pick/read-picks.js";
+export { type NoiseReportOptions, noiseReport } from "./report/noise-report.js";
+export type { NoiseReport, ReportEntry, ReportPlot, ReportSection } from "./report/report.js";
+export { reportCsv } from "./report/report-csv.js";
+export { type ReportMarkdownOptions, reportMarkdown } from "./report/report-markdown.js";
+export type { ReportedNoise } from "./report/report-of-noise.js";
+export type { ReportedReference } from "./report/report-of-reference.js";
+export { reportText } from "./report/report-text.js";
 export { type CandidatesPlotOptions, candidatesPlot } from "./show/candidates-plot.js";
 export { csvTable } from "./show/csv-table.js";
 export type { DensityInterval, DensityModel, DensityPlotOptions } from "./show/density-options.js";

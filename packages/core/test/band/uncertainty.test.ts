@@ -23,7 +23,9 @@ const curve = curveFromPoints(
 const lines = polyline(curve);
 
 /** The same spectrum without its pieces: the adapted rule is the only one left. */
-function withoutPieces({ pieces: _, ...rest }: Spectrum): Spectrum {
+function withoutPieces(spectrum: Spectrum): Spectrum {
+  const { pieces, ...rest } = spectrum;
+  expect(pieces).toBeDefined();
   return rest;
 }
 

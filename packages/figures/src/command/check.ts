@@ -62,15 +62,19 @@ export const checkCommand: Command = {
       weighting: readThrough(parsed.all("through")),
       relativeTo: quantityOption(parsed, "of", curve.unit),
     };
+    const progress = streams.progress("checking", stated.length);
     const checks = stated.map((text) => {
+      progress.step();
       try {
         return { text, check: checkStatedFigure(curve, text, options) };
       } catch (error) {
         // one of several figures may lie beyond the points: the others are still checked
         if (error instanceof NoiseError && stated.length > 1) return { text, refused: error.message };
+        progress.end();
         throw error;
       }
     });
+    progress.end();
     if (parsed.has("json")) {
       streams.print(
         `${JSON.stringify({ curve: name, source: curve.source, checks: checks.map(({ check, ...refused }) => check ?? refused) }, undefined, 2)}\n`,

@@ -6,6 +6,7 @@ import { fitCommand } from "./fit.js";
 import { noiseCommand } from "./noise.js";
 import { plotCommand } from "./plot.js";
 import { readCommand } from "./read.js";
+import { reportCommand } from "./report.js";
 
 /** Every command, in the order a curve goes through them. */
 export const commands: readonly Command[] = Object.freeze([
@@ -16,4 +17,5 @@ export const commands: readonly Command[] = Object.freeze([
   plotCommand,
   compareCommand,
   budgetCommand,
+  reportCommand,
 ]);

@@ -20,6 +20,7 @@ function run(
     print: (text) => {
       said.out += text;
     },
+    progress: () => ({ step: () => {}, end: () => {} }),
     complain: (text) => {
       said.complaint += text;
     },
@@ -210,5 +211,33 @@ describe("compare", () => {
     expect(run(["compare", "R1.csv", "R1.csv", "--band", "1Hz:2Hz"]).complaint).toMatch(/different names/);
     const { complaint, status } = run(["compare", "R1.csv", "--band", "1Hz:2Hz", "--current", "R2=1pA/√Hz"]);
     expect([status, complaint]).toEqual([1, 'Expected --current for one of the curves, R1=...; got "R2=1pA/√Hz".\n']);
+  });
+});
+
+describe("quietband report", () => {
+  test("writes one document in four forms, the plot embedded or beside", () => {
+    const { status, out } = run(["report", "strain-channel.json"]);
+    expect(status).toBe(0);
+    expect(out).toMatch(/to attack first +amplifier A1 +87 % of the power; halved, the total would be 10\.63 nV/);
+    const { written } = run([
+      "report",
+      "strain-channel.json",
+      "--as",
+      "markdown",
+      "--output",
+      "a.md",
+      "--plot",
+      "a.svg",
+    ]);
+    expect(written.get("a.md")).toContain("](a.svg)");
+    expect(written.get("a.svg")).toMatch(/^<svg /);
+    expect(run(["report", "strain-channel.json", "--as", "csv"]).out).toMatch(/^section,figure,value,unit/);
+    const { title } = JSON.parse(run(["report", "strain-channel.json", "--as", "json"]).out) as { title: string };
+    expect(title).toContain("INVENTED");
+  });
+
+  test("a form it does not know is a wrong use", () => {
+    const { status, complaint } = run(["report", "strain-channel.json", "--as", "pdf"]);
+    expect([status, complaint]).toEqual([2, "quietband report writes text, markdown, csv, json; got --as pdf.\n"]);
   });
 });
