@@ -47,7 +47,7 @@ const keys: readonly (keyof NoiseReportOptions)[] = [
  * const noise = bandNoise(whiteFlicker({ floor: 70e-9, cornerHz: 55 }), { fromHz: 0.1, toHz: 10 });
  * const report = noiseReport({ title: "Reference (invented)", noise: { noise, basis: "model" } });
  * report.sections[0].entries[0].value; // → 1.13561e-6
- * reportText(report).split("\n")[3]?.trim(); // → RMS                         1.136 µV   0.1 Hz to 10 Hz, model, no uncertainty stated, arithmetic ± 4e-15
+ * reportText(report).split("\n")[2]; // → Noise
  * ```
  */
 export function noiseReport(options: NoiseReportOptions): NoiseReport {
