@@ -22,7 +22,7 @@ describe("Rice's rates", () => {
   });
 
   test("its maxima come 0.775 times its width a second: √(m₄/m₂)", () => {
-    const moment = (order: number) => spectralMoment(white, order, { fromHz: 0, toHz: 1 }).value;
+    const moment = (order: 2 | 4) => spectralMoment(white, order, { fromHz: 0, toHz: 1 }).value;
     const rate = Math.sqrt(moment(4) / moment(2));
     expectRelative(rate, exact(/^maxima/), 1e-12);
     expect(rate.toFixed(3)).toBe("0.775");
