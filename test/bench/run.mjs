@@ -5,18 +5,7 @@ import { spawnSync } from "node:child_process";
 import simpson from "integrate-adaptive-simpson";
 import { budget, byQuadrature } from "./budget.mjs";
 import { cases, model } from "./cases.mjs";
-
-const secondsACall = (run) => {
-  for (let k = 0; k < 200; k += 1) run(k);
-  let calls = 1;
-  for (;;) {
-    const begin = performance.now();
-    for (let k = 0; k < calls; k += 1) run(k);
-    const seconds = (performance.now() - begin) / 1000;
-    if (seconds > 0.2) return seconds / calls;
-    calls = Math.ceil(calls * Math.min(10, 0.25 / Math.max(seconds, 1e-4)));
-  }
-};
+import { secondsACall } from "./seconds-a-call.mjs";
 
 const python = spawnSync("python3", ["-c", "import scipy; print(scipy.__version__)"], { encoding: "utf8" });
 const scipy = python.status === 0 ? python.stdout.trim() : undefined;

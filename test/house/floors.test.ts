@@ -4,7 +4,7 @@ import { filesBelow, importsOf, textOf } from "../support/sources.js";
 /** The house as docs/architecture.md draws it: rooms by floor; a file imports from lower floors or its own room. */
 const houses: Readonly<Record<string, Readonly<Record<string, number>>>> = {
   core: { ground: 0, numerics: 1, curve: 2, spectrum: 3, weighting: 3, band: 4, fit: 5, record: 5 },
-  figures: { convert: 0, chain: 1, judge: 1, show: 2, command: 3 },
+  figures: { convert: 0, file: 1, chain: 2, judge: 2, pick: 2, show: 3, report: 4, command: 5 },
 };
 
 for (const [house, floors] of Object.entries(houses)) {

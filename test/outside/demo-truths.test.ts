@@ -1,5 +1,13 @@
 import { readFileSync } from "node:fs";
-import { bandNoise, butterworthLowPass, fitCurve, polyline, readCurve, scaleSpectrum } from "@quietband/core";
+import {
+  bandNoise,
+  butterworthLowPass,
+  fitBandFigures,
+  fitCurve,
+  polyline,
+  readCurve,
+  scaleSpectrum,
+} from "@quietband/core";
 import { checkStatedFigure } from "@quietband/figures";
 import { describe, expect, test } from "vitest";
 import { demoCurve } from "../support/published.js";
@@ -79,13 +87,79 @@ test("the tilt channel agrees with a dense sum on a logarithmic grid, made here"
 });
 
 describe("stated figures", () => {
-  test("R1, A1 and J1 lie within their tolerance, X1 is stated lower by a factor 2", () => {
-    const claimOf = (name: (typeof names)[number], text: string, relativeTo?: number): string =>
-      checkStatedFigure(readCurve(demoCurve(name)), text, { beyond: { below: 1 }, relativeTo }).claim;
-    expect(claimOf("R1", "7.2 µV peak-to-peak, 0.1 Hz to 10 Hz")).toBe("within its tolerance");
-    expect(claimOf("A1", "0.14 µV peak-to-peak, 0.1 Hz to 10 Hz")).toBe("within its tolerance");
-    expect(claimOf("J1", "0.47 µV peak-to-peak, 0.1 Hz to 10 Hz")).toBe("within its tolerance");
-    expect(claimOf("X1", "2,4 ppm peak-to-peak, 0,1 Hz to 10 Hz", 5)).toBe("stated lower");
+  const checkOf = (name: (typeof names)[number], text: string, relativeTo?: number) =>
+    checkStatedFigure(readCurve(demoCurve(name)), text, { beyond: { below: 1 }, relativeTo });
+
+  test("R1 agrees as a 10 s record and is lower than 6.6 × RMS", () => {
+    const check = checkOf("R1", "7.2 µV peak-to-peak, 0.1 Hz to 10 Hz");
+    expect(check.verdict).toBe("agrees");
+    expect(check.bases.map(({ basis, verdict }) => `${basis}: ${verdict}`)).toEqual([
+      "record: agrees",
+      "convention: stated lower",
+    ]);
+    expect(check.summary).toMatch(
+      /^agrees with the range of one record of 10 s, 7\.00 µV; lower than 6\.6 × RMS, 8\.25 µV, by 13 %$/,
+    );
+  });
+
+  test("A1 and J1 agree, X1 is stated lower by a factor 2 as a record and by more by convention", () => {
+    expect(checkOf("A1", "0.14 µV peak-to-peak, 0.1 Hz to 10 Hz").verdict).toBe("agrees");
+    expect(checkOf("J1", "0.47 µV peak-to-peak, 0.1 Hz to 10 Hz").verdict).toBe("agrees");
+    const check = checkOf("X1", "2,4 ppm peak-to-peak, 0,1 Hz to 10 Hz", 5);
+    expect([check.verdict, check.bases[0].basis]).toEqual(["stated lower", "record"]);
+    expect(1 / check.bases[0].ratio).toBeGreaterThan(1.9);
+    expect(1 / check.bases[0].ratio).toBeLessThan(2.1);
+  });
+
+  test("each view lies where the simulation of the truth does, within what the points' scatter makes", () => {
+    for (const name of ["R1", "A1", "J1", "X1"] as const) {
+      const { mc_range10s_brick: brick, mc_range10s_fixture: fixture } = truths[name] as unknown as Record<
+        string,
+        { readonly mean: number; readonly spread: number }
+      >;
+      const stated = name === "X1" ? "12 µV peak-to-peak, 0.1 Hz to 10 Hz" : "1 µV peak-to-peak, 0.1 Hz to 10 Hz";
+      const views = checkOf(name, stated).views.filter(({ basis }) => basis === "record");
+      for (const [index, simulated] of [brick, fixture].entries()) {
+        expectRelative(views[index]?.predicted ?? 0, simulated?.mean ?? 0, 0.035);
+        expectRelative((views[index]?.spread ?? 0) * (views[index]?.predicted ?? 0), simulated?.spread ?? 0, 0.1);
+      }
+    }
+  });
+
+  test("floor and corner from the two stated figures alone, by factor 6.6 and 6.0, as the demo page says", () => {
+    const solved = (rms: number, peakToPeak: number, peakToPeakFactor: number) =>
+      fitBandFigures(
+        [
+          { fromHz: 0.1, toHz: 10, peakToPeak, peakToPeakFactor },
+          { fromHz: 10, toHz: 1000, rms },
+        ],
+        { unit: "V", exponent: 1 },
+      );
+    const page = [
+      [6.6, 75.39e-9, 43.3],
+      [6.0, 73.68e-9, 55.5],
+    ] as const;
+    for (const [factor, floor, corner] of page) {
+      const fit = solved(2.6e-6, 7.2e-6, factor);
+      expectRelative(fit.floor ?? 0, floor, 1e-4);
+      expectRelative(fit.cornerHz ?? 0, corner, 1e-3);
+    }
+    // A1: no nonnegative corner reproduces the pair by 6.6; a factor known to ± 0.3 leaves an upper limit
+    const chopper = fitBandFigures(
+      [
+        {
+          fromHz: 0.1,
+          toHz: 10,
+          peakToPeak: 0.14e-6,
+          peakToPeakFactor: 6.6,
+          peakToPeakFactorUncertainty: 0.3,
+          roundingHalfUnit: 5e-9,
+        },
+      ],
+      { unit: "V", exponent: 1, densities: [{ frequency: 1000, density: 7.2e-9, roundingHalfUnit: 0.05e-9 }] },
+    );
+    expect([chopper.model, chopper.cornerLimit?.side]).toEqual(["floor", "below"]);
+    expect(chopper.cornerLimit?.hz).toBeLessThan(1);
   });
 
   test("J1 says that half of its band rests on an assumed exponent", () => {

@@ -27,11 +27,28 @@ export { type ReadCurveOptions, readCurve } from "./curve/read-curve.js";
 export { thinCurve } from "./curve/thin-curve.js";
 export type { AxisTick } from "./curve/tick-consistency.js";
 export { writeCurve } from "./curve/write-curve.js";
+export type { BandFigure, SpotDensity } from "./fit/band-figure.js";
+export type { Bump } from "./fit/bump.js";
 export type { FitAlternative } from "./fit/choose.js";
+export type { CornerLimit } from "./fit/figure-limits.js";
+export {
+  type FitAgainstPoints,
+  type FitAgainstPointsOptions,
+  fitAgainstPoints,
+  type HeavyPoint,
+} from "./fit/fit-against-points.js";
+export {
+  type BandFiguresFit,
+  type BandFiguresOptions,
+  type FigureCost,
+  type FigureResidual,
+  fitBandFigures,
+} from "./fit/fit-band-figures.js";
 export { type FitResidual, type FittedCurve, fitCurve } from "./fit/fit-curve.js";
 export type { ExponentPrior, FitModelName, FitOptions } from "./fit/fit-options.js";
 export type { LeftOutPoint } from "./fit/fit-points.js";
 export type { FitFinding } from "./fit/judge.js";
+export type { FigureFinding } from "./fit/judge-figures.js";
 export type { Misreading } from "./fit/misreadings.js";
 export {
   DivergentIntegralError,
@@ -46,6 +63,7 @@ export { type Quantity, type ReadQuantityOptions, readQuantity } from "./ground/
 export { type WriteQuantityOptions, writeQuantity } from "./ground/write-quantity.js";
 export type { PowerLawPiece, PowerLawTerm } from "./numerics/power-law.js";
 export type { Beyond, BeyondSide } from "./spectrum/beyond.js";
+export { type DensityIntervalOptions, type DensityRange, densityInterval } from "./spectrum/density-interval.js";
 export { type FunctionSpectrumOptions, functionSpectrum } from "./spectrum/function-spectrum.js";
 export { polyline } from "./spectrum/polyline.js";
 export { type PowerLaw, powerLaws } from "./spectrum/power-laws.js";

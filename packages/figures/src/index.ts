@@ -58,6 +58,11 @@ export { amplitudeRatioDb, amplitudeRatioFromDb } from "./convert/amplitude-rati
 export { type ConverterFigures, type ConverterFiguresOptions, converterFigures } from "./convert/converter-figures.js";
 export { crestFactor, crestFactorFor } from "./convert/crest-factor.js";
 export {
+  type ExpectedPeakToPeak,
+  type ExpectedPeakToPeakOptions,
+  expectedPeakToPeak,
+} from "./convert/expected-peak-to-peak.js";
+export {
   type ConverterScale,
   idealConverterSnrDb,
   leastSignificantBit,
@@ -77,6 +82,7 @@ export { type PeakToPeak, type PeakToPeakConvention, peakToPeak } from "./conver
 export { type GaussianShare, peakToPeakFactorFor } from "./convert/peak-to-peak-factor-for.js";
 export { powerRatioDb, powerRatioFromDb } from "./convert/power-ratio-db.js";
 export { type RangeOfNormals, rangeOfNormals } from "./convert/range-of-normals.js";
+export type { RecordCoupling } from "./convert/record-band.js";
 export { type ReferenceLimit, referenceLimitedSnrDb } from "./convert/reference-limited-snr-db.js";
 export type { Rms } from "./convert/rms.js";
 export {
@@ -87,8 +93,21 @@ export {
 } from "./convert/rms-for-bits.js";
 export { rmsFromPeakToPeak } from "./convert/rms-from-peak-to-peak.js";
 export { shareOutside } from "./convert/share-outside.js";
-export { type CheckOptions, checkStatedFigure, type StatedFigureCheck } from "./judge/check-stated-figure.js";
+export type { BasisVerdict, FigureTolerance } from "./judge/basis-verdict.js";
+export type { CheckOptions, FigureBasis } from "./judge/check-options.js";
+export { checkStatedFigure, type StatedFigureCheck } from "./judge/check-stated-figure.js";
+export type { FigureView } from "./judge/figure-views.js";
 export { readStatedFigure, type StatedFigure } from "./judge/read-stated-figure.js";
+export type { Reconciler } from "./judge/reconcile.js";
+export { picksSchema } from "./pick/picks-schema.js";
+export { type PickedPlot, readPicks } from "./pick/read-picks.js";
+export { type NoiseReportOptions, noiseReport } from "./report/noise-report.js";
+export type { NoiseReport, ReportEntry, ReportPlot, ReportSection } from "./report/report.js";
+export { reportCsv } from "./report/report-csv.js";
+export { type ReportMarkdownOptions, reportMarkdown } from "./report/report-markdown.js";
+export type { ReportedNoise } from "./report/report-of-noise.js";
+export type { ReportedReference } from "./report/report-of-reference.js";
+export { reportText } from "./report/report-text.js";
 export { type CandidatesPlotOptions, candidatesPlot } from "./show/candidates-plot.js";
 export { csvTable } from "./show/csv-table.js";
 export type { DensityInterval, DensityModel, DensityPlotOptions } from "./show/density-options.js";

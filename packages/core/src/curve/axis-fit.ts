@@ -1,4 +1,5 @@
 import { OutOfDomainError } from "../ground/errors.js";
+import { chiSquareLimit } from "../numerics/chi-square-limit.js";
 
 /** A place on the plot, pixels. */
 export interface Pixel {
@@ -132,7 +133,8 @@ function assemble(
 function widened(sigma: number, fits: readonly LinearFit[]): number {
   const freedom = fits.reduce((sum, fit) => sum + fit.freedom, 0);
   const square = fits.reduce((sum, fit) => sum + fit.residuals.reduce((part, residual) => part + residual ** 2, 0), 0);
-  return freedom >= 2 ? Math.max(sigma, Math.sqrt(square / freedom)) : sigma;
+  // two or three degrees of freedom scatter by themselves: only what contradicts the stated error replaces it
+  return freedom >= 2 && square > chiSquareLimit(freedom) * sigma * sigma ? Math.sqrt(square / freedom) : sigma;
 }
 
 /** Least squares on functions made orthonormal over the places (Gram–Schmidt), so that coefficients are independent. */

@@ -68,7 +68,7 @@ export function pointsFromPath(calibration: AxesCalibration, pathData: string, o
       );
     for (const place of stroke) append(trace, place, calibration);
   }
-  if (trace.length < 2)
+  if (placeOf(trace.at(-1), calibration) - placeOf(trace[0], calibration) < 2 * strokeStep)
     throw new MalformedDataError("The path must hold at least two places at different frequencies to be a curve.");
   return pointsFromPicks(calibration, trace, { pickErrorPixels, label: options.label, source: options.source });
 }
@@ -105,6 +105,8 @@ function append(trace: Pixel[], place: Pixel, calibration: AxesCalibration): voi
     trace.push(place);
     return;
   }
+  // where one stroke ends and the next begins there is nothing new
+  if (Math.hypot(place.x - last.x, place.y - last.y) < strokeStep / 2) return;
   const before = trace.at(-2);
   const direction = Math.sign(calibration.axes.fit.shiftOf({ x: 1, y: 0 }).u);
   if (before !== undefined && placeOf(last, calibration) - placeOf(before, calibration) <= 1.5 * strokeStep)

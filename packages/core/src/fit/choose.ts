@@ -2,7 +2,6 @@ import { fitModel } from "./fit-model.js";
 import type { FitModelName, ResolvedExponent } from "./fit-options.js";
 import type { FitPoints } from "./fit-points.js";
 import { type RefinedFit, refine } from "./refine.js";
-import { startsFor } from "./start.js";
 
 /** One model that was tried, for the table of alternatives. */
 export interface FitAlternative {
@@ -23,38 +22,43 @@ export interface Tried {
 }
 
 /**
- * By how much the criterion must fall for an extra term. Bare AICc keeps a needless term in one curve of eight; with 6 it is
- * refused in more than 95 % of white and of flicker curves and kept in more than 99 % of those with a clear corner (measured in
- * fit-curve.slow.test.ts).
+ * By how much the criterion must fall for a second and for a third term. Bare AICc keeps a needless term in one curve of eight;
+ * with these it is refused in more than 99 % of white and of flicker curves, and a clear corner is kept, with nothing
+ * added, in more than 99 % (2000 curves each, fit-curve.slow.test.ts). Three kinds of third term are tried, hence more.
  */
-export const extraTermMargin = 6;
+export const extraTermMargins: Readonly<Record<"second" | "third", number>> = Object.freeze({ second: 6, third: 9 });
 
 /** Share of the power that a term must carry at some point to count as seen. */
 const leastShare = 0.01;
 
-export function tryModel(
-  name: FitModelName,
-  exponent: ResolvedExponent,
-  points: FitPoints,
-  trust?: Float64Array,
-): Tried {
-  const model = fitModel(name, exponent);
-  const fit = refine(model, points, startsFor(model, points), trust);
-  return { fit, unsupported: whyUnsupported(fit, points) };
+/** Fits the named model; what was fitted once is not fitted again. */
+export type Trials = (name: FitModelName) => Tried;
+
+export function trialsOf(exponent: ResolvedExponent, points: FitPoints, trust?: Float64Array): Trials {
+  const known = new Map<FitModelName, Tried>();
+  return (name) => {
+    const before = known.get(name);
+    if (before !== undefined) return before;
+    const fit = refine(fitModel(name, exponent), points, { trust });
+    const tried = { fit, unsupported: whyUnsupported(fit, points) };
+    known.set(name, tried);
+    return tried;
+  };
 }
 
 /** From one term up: a further term must pay for itself. */
 export function chooseModel(
-  exponent: ResolvedExponent,
+  trial: Trials,
   points: FitPoints,
-  trust?: Float64Array,
+  excluded: readonly FitModelName[] = [],
 ): { readonly chosen: Tried; readonly alternatives: readonly FitAlternative[] } {
-  const trial = (name: FitModelName): Tried => tryModel(name, exponent, points, trust);
   const single: readonly [Tried, Tried] = [trial("floor"), trial("flicker")];
   const double = [trial("floorAndFlicker")];
   const triple =
     points.x.length >= 8
-      ? (["floorFlickerRandomWalk", "floorFlickerLorentzian", "floorFlickerRise"] as const).map(trial)
+      ? (["floorFlickerRandomWalk", "floorFlickerLorentzian", "floorFlickerRise"] as const)
+          .filter((name) => !excluded.includes(name))
+          .map(trial)
       : [];
   const all = [...single, ...double, ...triple];
   const spread = spreadOf(all);
@@ -64,9 +68,12 @@ export function chooseModel(
       .filter(({ unsupported }) => unsupported === undefined)
       .toSorted((one, other) => criterion(one) - criterion(other))[0];
   let chosen = best(single) ?? single[0];
-  for (const step of [double, triple]) {
+  for (const [step, margin] of [
+    [double, extraTermMargins.second],
+    [triple, extraTermMargins.third],
+  ] as const) {
     const richer = best(step);
-    if (richer !== undefined && criterion(richer) < criterion(chosen) - extraTermMargin) chosen = richer;
+    if (richer !== undefined && criterion(richer) < criterion(chosen) - margin) chosen = richer;
   }
   return {
     chosen,
@@ -88,7 +95,8 @@ function verdictOf(tried: Tried, chosen: Tried, difference: number): FitAlternat
   if (tried === chosen) return "chosen";
   if (tried.unsupported !== undefined) return "not supported";
   const richer = tried.fit.model.parameters.length > chosen.fit.model.parameters.length;
-  return richer && difference > -extraTermMargin && difference < extraTermMargin ? "not needed" : "worse";
+  const margin = tried.fit.model.parameters.length > 2 ? extraTermMargins.third : extraTermMargins.second;
+  return richer && Math.abs(difference) < margin ? "not needed" : "worse";
 }
 
 /** AICc with known uncertainties: χ²/s² + 2k + 2k(k + 1)/(n − k − 1) (Hurvich and Tsai 1989). */

@@ -1,8 +1,10 @@
 import type { Curve } from "../curve/curve.js";
 import { OutOfDomainError } from "../ground/errors.js";
 import { completeOptions } from "../ground/options.js";
+import { coverageFactor } from "../numerics/coverage-factor.js";
 import type { Spectrum } from "../spectrum/spectrum.js";
-import { chooseModel, type FitAlternative, type Tried, tryModel } from "./choose.js";
+import { requireBump, withBump } from "./bump.js";
+import { chooseModel, type FitAlternative, type Tried, trialsOf } from "./choose.js";
 import { type FitModelName, type FitOptions, resolveExponent } from "./fit-options.js";
 import { choosePoints, type FitPoints, type LeftOutPoint } from "./fit-points.js";
 import { fittedSpectrum } from "./fitted-spectrum.js";
@@ -34,6 +36,8 @@ export interface FittedCurve extends Spectrum {
     readonly cornerHz: number | undefined;
     readonly exponent: number | undefined;
   };
+  /** From standard error to a 95 % interval, and why by that factor. */
+  readonly coverage: { readonly probability: 0.95; readonly k: number; readonly basis: string };
   readonly chiSquarePerDegree: number;
   readonly degreesOfFreedom: number;
   /** Every point of the curve, also those left out. */
@@ -53,6 +57,7 @@ const fitDefaults: FitOptions = Object.freeze({
   fromHz: 0,
   toHz: Number.POSITIVE_INFINITY,
   misreadings: "report",
+  bump: undefined,
   beyond: "refuse",
 });
 
@@ -93,7 +98,7 @@ const modelNames: readonly string[] = Object.freeze([
  * ```
  */
 export function fitCurve(curve: Curve, options: FitOptions = {}): FittedCurve {
-  const { model, exponent, fromHz, toHz, misreadings, beyond } = completeOptions<FitOptions>(
+  const { model, exponent, fromHz, toHz, misreadings, bump, beyond } = completeOptions<FitOptions>(
     "fitCurve",
     fitDefaults,
     options,
@@ -101,18 +106,21 @@ export function fitCurve(curve: Curve, options: FitOptions = {}): FittedCurve {
   requireOneOf("model", modelNames, model);
   requireOneOf("misreadings", ["report", "downweight"], misreadings);
   const resolved = resolveExponent(exponent);
-  const points = choosePoints(curve, fromHz ?? 0, toHz ?? Number.POSITIVE_INFINITY);
-  const suspected = findMisreadings(resolved, points);
+  const points = choosePoints(curve, fromHz, toHz, requireBump(curve, bump));
+  const plain = trialsOf(resolved, points);
+  const suspected = findMisreadings(plain, points);
   const trust = misreadings === "downweight" && suspected.length > 0 ? trustWithout(points, suspected) : undefined;
+  const trial = trust === undefined ? plain : trialsOf(resolved, points, trust);
   const { chosen, alternatives } =
     model === "auto" || model === undefined
-      ? chooseModel(resolved, points, trust)
-      : { chosen: tryModel(model, resolved, points, trust), alternatives: [] };
+      ? chooseModel(trial, points, bump === undefined ? [] : ["floorFlickerLorentzian"])
+      : { chosen: trial(model), alternatives: [] };
   const used = chosen.fit;
   const degrees = used.degrees - (trust === undefined ? 0 : suspected.length);
   const perDegree = degrees > 0 ? used.chiSquare / degrees : 0;
   const covariance = widened(used.covariance, Math.max(1, perDegree));
-  const spectrum = fittedSpectrum(curve, points, used, covariance, beyond ?? "refuse");
+  const plainSpectrum = fittedSpectrum(curve, points, used, covariance, beyond ?? "refuse");
+  const spectrum = bump === undefined ? plainSpectrum : withBump(plainSpectrum, curve, bump);
   const residualsDb = residualsOf(curve, points, used);
   const found = suspected.map(({ misreading }) => misreading);
   const findings = judgeFit({
@@ -128,6 +136,7 @@ export function fitCurve(curve: Curve, options: FitOptions = {}): FittedCurve {
     ...spectrum,
     ...figuresOf(used, covariance),
     model: used.model.name,
+    coverage: coverageOf(perDegree, degrees),
     chiSquarePerDegree: perDegree,
     degreesOfFreedom: degrees,
     residualsDb,
@@ -148,6 +157,21 @@ function trustWithout(points: FitPoints, suspected: readonly { readonly index: n
   const trust = new Float64Array(points.x.length).fill(1);
   for (const { index } of suspected) trust[index] = 0;
   return trust;
+}
+
+/** coverageFactor(0.95, Infinity), which takes longer than a fit. */
+const normalFactor = 1.959963984540054;
+
+/** Known uncertainties take the normal factor; a scatter estimated from the residuals takes Student's. */
+function coverageOf(perDegree: number, degrees: number): FittedCurve["coverage"] {
+  const estimated = perDegree > 1;
+  return Object.freeze({
+    probability: 0.95,
+    k: estimated ? coverageFactor(0.95, degrees) : normalFactor,
+    basis: estimated
+      ? `Student's factor for ${degrees} degrees of freedom: the scatter is estimated from the residuals`
+      : "normal factor: the points scatter no more than their uncertainty says",
+  });
 }
 
 function widened(covariance: RefinedFit["covariance"], factor: number): RefinedFit["covariance"] {

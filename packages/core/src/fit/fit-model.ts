@@ -14,6 +14,8 @@ export interface FitModel {
   readonly exponent: ResolvedExponent;
   /** ln(S/e^scale) at ln f, and its slopes by the parameters. */
   shapeAt(x: number, parameters: ArrayLike<number>, slopes: Float64Array): number;
+  /** The same at every x, slopes row by row: the loop a fit spends its time in. */
+  shapeOver(x: Float64Array, parameters: ArrayLike<number>, shape: Float64Array, slopes: Float64Array): void;
 }
 
 export type FitParameter =
@@ -34,49 +36,90 @@ interface ShapeTerm {
 const riseExponent = 2;
 
 export function fitModel(name: FitModelName, exponent: ResolvedExponent): FitModel {
-  const own = exponent.kind !== "fixed" && name !== "floor";
   const parameters: FitParameter[] = [];
   if (name !== "floor" && name !== "flicker") parameters.push("ln corner");
+  const own = exponent.kind !== "fixed" && name !== "floor";
   const exponentAt = own ? parameters.push("exponent") - 1 : -1;
   const extra = parameters.length;
   parameters.push(...extraParameters(name));
   const exponentOf = (p: ArrayLike<number>): number =>
     exponentAt >= 0 ? (p[exponentAt] as number) : exponent.kind === "fixed" ? exponent.value : 1;
   const base = { name, parameters, exponentAt, exponent };
-  if (name === "floor") return { ...base, shapeAt: () => 0 };
-  if (name === "flicker")
-    return {
-      ...base,
-      shapeAt(x, p, slopes) {
-        if (exponentAt >= 0) slopes[exponentAt] = -x;
-        return -exponentOf(p) * x;
-      },
-    };
-  if (extra === parameters.length)
-    return {
-      ...base,
-      // one term beside the floor: the path that nearly every fit takes
-      shapeAt(x, p, slopes) {
-        const steepness = exponentOf(p);
-        const distance = (p[0] as number) - x;
-        const share = 1 / (1 + Math.exp(-steepness * distance));
-        slopes[0] = steepness * share;
-        if (exponentAt >= 0) slopes[exponentAt] = distance * share;
-        return softplus(steepness * distance);
-      },
-    };
-  const terms: ShapeTerm[] = [cornerTerm(exponentAt, exponentOf), ...extraTerms(name, extra)];
+  if (name === "floorAndFlicker") return { ...base, ...twoTerms(exponentAt, exponentOf) };
+  const shapeAt = shapeOf(name, exponentAt, exponentOf, extra);
+  return { ...base, shapeAt, shapeOver: pointByPoint(shapeAt, parameters.length) };
+}
+
+type ExponentOf = (parameters: ArrayLike<number>) => number;
+
+function shapeOf(name: FitModelName, exponentAt: number, exponentOf: ExponentOf, extra: number): FitModel["shapeAt"] {
+  if (name === "floor") return () => 0;
+  if (name !== "flicker") return manyTerms([cornerTerm(exponentAt, exponentOf), ...extraTerms(name, extra)]);
+  return (x, p, slopes) => {
+    if (exponentAt >= 0) slopes[exponentAt] = -x;
+    return -exponentOf(p) * x;
+  };
+}
+
+function pointByPoint(shapeAt: FitModel["shapeAt"], size: number): FitModel["shapeOver"] {
+  const own = new Float64Array(size);
+  return (x, p, shape, slopes) => {
+    for (let i = 0; i < x.length; i += 1) {
+      shape[i] = shapeAt(x[i] as number, p, own);
+      for (let s = 0; s < size; s += 1) slopes[i * size + s] = own[s] as number;
+    }
+  };
+}
+
+/** ln(1 + (f_c/f)^a): the model of nearly every fit, with a loop of its own. */
+function twoTerms(exponentAt: number, exponentOf: ExponentOf): Pick<FitModel, "shapeAt" | "shapeOver"> {
+  const size = exponentAt >= 0 ? 2 : 1;
   return {
-    ...base,
     shapeAt(x, p, slopes) {
-      slopes.fill(0);
-      let largest = 0;
-      for (const term of terms) largest = Math.max(largest, term.logAt(x, p));
-      let sum = Math.exp(-largest);
-      for (const term of terms) sum += Math.exp(term.logAt(x, p) - largest);
-      for (const term of terms) term.addSlopes(x, p, Math.exp(term.logAt(x, p) - largest) / sum, slopes);
-      return largest + Math.log(sum);
+      const steepness = exponentOf(p);
+      const distance = (p[0] as number) - x;
+      const smaller = Math.exp(-Math.abs(steepness * distance));
+      const share = (steepness * distance > 0 ? 1 : smaller) / (1 + smaller);
+      slopes[0] = steepness * share;
+      if (exponentAt >= 0) slopes[exponentAt] = distance * share;
+      return Math.max(steepness * distance, 0) + Math.log1p(smaller);
     },
+    shapeOver(x, p, shape, slopes) {
+      const steepness = exponentOf(p);
+      const corner = p[0] as number;
+      for (let i = 0; i < x.length; i += 1) {
+        const distance = corner - (x[i] as number);
+        const z = steepness * distance;
+        const smaller = Math.exp(z > 0 ? -z : z);
+        const share = (z > 0 ? 1 : smaller) / (1 + smaller);
+        shape[i] = Math.max(z, 0) + Math.log1p(smaller);
+        slopes[size * i] = steepness * share;
+        if (size === 2) slopes[2 * i + 1] = distance * share;
+      }
+    },
+  };
+}
+
+/** ln(1 + Σ e^log) with one exponential a term. */
+function manyTerms(terms: readonly ShapeTerm[]): FitModel["shapeAt"] {
+  const shares = new Float64Array(terms.length);
+  return (x, p, slopes) => {
+    let largest = 0;
+    for (let t = 0; t < shares.length; t += 1) {
+      const log = (terms[t] as ShapeTerm).logAt(x, p);
+      shares[t] = log;
+      if (log > largest) largest = log;
+    }
+    let sum = Math.exp(-largest);
+    for (let t = 0; t < shares.length; t += 1) {
+      const share = Math.exp((shares[t] as number) - largest);
+      shares[t] = share;
+      sum += share;
+    }
+    slopes.fill(0);
+    for (let t = 0; t < shares.length; t += 1)
+      (terms[t] as ShapeTerm).addSlopes(x, p, (shares[t] as number) / sum, slopes);
+    return largest + Math.log(sum);
   };
 }
 

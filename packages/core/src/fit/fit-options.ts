@@ -1,5 +1,6 @@
 import { OutOfDomainError } from "../ground/errors.js";
 import type { Beyond } from "../spectrum/beyond.js";
+import type { Bump } from "./bump.js";
 
 /** The models a fit knows; all but the Lorentzian are sums of power laws, so every integral keeps an exact route. */
 export type FitModelName =
@@ -28,6 +29,8 @@ export interface FitOptions {
   readonly toHz?: number | undefined;
   /** Gross misreadings are named ('report', the default) or also given no weight ('downweight'). */
   readonly misreadings?: "report" | "downweight" | undefined;
+  /** A bump that no model describes: its points stand for themselves, straight lines in place of the model. */
+  readonly bump?: Bump | undefined;
   /** How the spectrum goes on beyond the fitted points; 'segments' lets the model's own formula go on. */
   readonly beyond?: Beyond | undefined;
 }

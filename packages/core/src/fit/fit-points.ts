@@ -1,5 +1,7 @@
 import type { Curve, CurvePoint } from "../curve/curve.js";
 import { OutOfDomainError } from "../ground/errors.js";
+import { arrayBlock } from "../numerics/array-block.js";
+import type { Bump } from "./bump.js";
 
 /** The points that take part in a fit, in logarithms. */
 export interface FitPoints {
@@ -18,10 +20,15 @@ export interface FitPoints {
 export interface LeftOutPoint {
   readonly frequency: number;
   readonly line?: number;
-  readonly why: "aside" | "below fromHz" | "above toHz";
+  readonly why: "aside" | "bump" | "below fromHz" | "above toHz";
 }
 
-export function choosePoints(curve: Curve, fromHz: number, toHz: number): FitPoints {
+export function choosePoints(
+  curve: Curve,
+  fromHz = 0,
+  toHz: number = Number.POSITIVE_INFINITY,
+  bump?: Bump,
+): FitPoints {
   if (!(fromHz >= 0 && toHz > fromHz))
     throw new OutOfDomainError(
       `The range of a fit must run from fromHz up to a higher toHz, in Hz; got ${fromHz} to ${toHz}.`,
@@ -29,7 +36,7 @@ export function choosePoints(curve: Curve, fromHz: number, toHz: number): FitPoi
   const points: CurvePoint[] = [];
   const leftOut: LeftOutPoint[] = [];
   for (const point of curve.points) {
-    const why = reasonToLeaveOut(point, fromHz, toHz);
+    const why = isIn(point, bump) ? "bump" : reasonToLeaveOut(point, fromHz, toHz);
     if (why === undefined) points.push(point);
     else leftOut.push({ frequency: point.frequency, why, ...(point.line !== undefined && { line: point.line }) });
   }
@@ -37,13 +44,17 @@ export function choosePoints(curve: Curve, fromHz: number, toHz: number): FitPoi
     throw new OutOfDomainError(
       `A fit needs at least two points; ${fromHz} Hz to ${toHz} Hz holds ${points.length} that are not set aside; widen fromHz and toHz.`,
     );
-  return {
-    points,
-    x: Float64Array.from(points, ({ frequency }) => Math.log(frequency)),
-    y: Float64Array.from(points, ({ density }) => Math.log(density)),
-    weight: Float64Array.from(points, ({ uncertainty }) => 1 / uncertainty),
-    leftOut,
-  };
+  const [x, y, weight] = arrayBlock([points.length, points.length, points.length]);
+  for (const [i, { frequency, density, uncertainty }] of points.entries()) {
+    x[i] = Math.log(frequency);
+    y[i] = Math.log(density);
+    weight[i] = 1 / uncertainty;
+  }
+  return { points, x, y, weight, leftOut };
+}
+
+function isIn({ frequency }: CurvePoint, bump: Bump | undefined): boolean {
+  return bump !== undefined && frequency >= bump.fromHz && frequency <= bump.toHz;
 }
 
 function reasonToLeaveOut(

@@ -24,21 +24,62 @@ export function fittedSpectrum(
   covariance: readonly (readonly number[])[] | undefined,
   beyond: Beyond,
 ): Spectrum {
-  const [first, last] = [points.points[0]?.frequency ?? 1, points.points.at(-1)?.frequency ?? 1];
-  const { terms, trap } = termsOf(fit.model, fit.scale, fit.parameters);
-  const law = resolveBeyond(beyond, {
+  const span = spanOf(points);
+  const sides = sidesOf(beyond);
+  const axis = curve.commonUncertainty > 0 ? [commonSensitivity("axis", curve.commonUncertainty)] : [];
+  const sensitivities =
+    covariance === undefined
+      ? axis
+      : [
+          parameterSensitivity(fit, covariance, span, sides),
+          ...axis,
+          ...sharedSensitivities(curve, points, fit, span, sides),
+        ];
+  return modelSpectrum(curve.unit, span, fit, { beyond, sensitivities, what: "fitted points" });
+}
+
+/** From the first point that counts to the last, those of a bump among them. */
+function spanOf({ points, leftOut }: FitPoints): readonly [number, number] {
+  const bump = leftOut.filter(({ why }) => why === "bump").map(({ frequency }) => frequency);
+  const all = [points[0]?.frequency ?? 1, points.at(-1)?.frequency ?? 1, ...bump];
+  return [Math.min(...all), Math.max(...all)];
+}
+
+/** The spectrum of a model that stated figures gave, over the frequencies that they span. */
+export function figuresSpectrum(
+  unit: string,
+  span: readonly [number, number],
+  fit: FittedModel,
+  covariance: readonly (readonly number[])[],
+  beyond: Beyond,
+): Spectrum {
+  const sensitivities = [parameterSensitivity(fit, covariance, span, sidesOf(beyond))];
+  return modelSpectrum(unit, span, fit, { beyond, sensitivities, what: "figures" });
+}
+
+/** A model with its parameters, however they were found. */
+export type FittedModel = Pick<RefinedFit, "model" | "scale" | "parameters">;
+
+function modelSpectrum(
+  unit: string,
+  [first, last]: readonly [number, number],
+  { model, scale, parameters }: FittedModel,
+  given: { readonly beyond: Beyond; readonly sensitivities: readonly Sensitivity[]; readonly what: string },
+): Spectrum {
+  const { terms, trap } = termsOf(model, scale, parameters);
+  const law = resolveBeyond(given.beyond, {
     below: Math.max(...terms.map(({ exponent }) => exponent)),
     above: Math.min(...terms.map(({ exponent }) => exponent)),
   });
-  const sides = { below: sideOf(beyond, "below"), above: sideOf(beyond, "above") };
+  const sides = sidesOf(given.beyond);
   const notes: string[] = [];
-  const sensitivities = parameterSensitivities(curve, points, fit, covariance, sides);
+  const sensitivities = [...given.sensitivities];
   const pieces: PowerLawPiece[] = [{ from: first, to: last, terms: copied(terms) }];
   for (const side of ["below", "above"] as const) {
     const own = law[side];
-    if (own === undefined) continue;
     const edge = side === "below" ? first : last;
-    notes.push(sides[side] === "segments" ? formulaNote(side, edge) : beyondNote(side, edge, own));
+    if (own === undefined || edge === 0 || edge === Number.POSITIVE_INFINITY) continue;
+    notes.push(sides[side] === "segments" ? formulaNote(side, edge, given.what) : beyondNote(side, edge, own));
     if (own.standardUncertainty > 0) sensitivities.push(exponentSensitivity(side, edge, own.standardUncertainty));
     const goingOn =
       sides[side] === "segments" ? copied(terms) : [lawFrom(edge, termsAt(terms, edge) + trapAt(trap, edge), own)];
@@ -50,30 +91,12 @@ export function fittedSpectrum(
     sensitivities: Object.freeze(sensitivities),
     notes: Object.freeze(notes),
   };
-  if (trap === undefined) return spectrumFromPieces(curve.unit, pieces, extras);
-  return withTrap(curve.unit, pieces, trap, extras);
+  if (trap === undefined) return spectrumFromPieces(unit, pieces, extras);
+  return withTrap(unit, pieces, trap, extras);
 }
 
 function trapAt(trap: { readonly level: number; readonly cornerHz: number } | undefined, hz: number): number {
   return trap === undefined ? 0 : trap.level / (1 + (hz / trap.cornerHz) ** 2);
-}
-
-/** The fit's own parameters, an error of the axis, and errors that points share. */
-function parameterSensitivities(
-  curve: Curve,
-  points: FitPoints,
-  fit: RefinedFit,
-  covariance: readonly (readonly number[])[] | undefined,
-  sides: Sides,
-): Sensitivity[] {
-  const axis = curve.commonUncertainty > 0 ? [commonSensitivity("axis", curve.commonUncertainty)] : [];
-  if (covariance === undefined) return axis;
-  const span = [points.points[0]?.frequency ?? 1, points.points.at(-1)?.frequency ?? 1] as const;
-  return [
-    parameterSensitivity(fit, covariance, span, sides),
-    ...axis,
-    ...sharedSensitivities(curve, points, fit, span, sides),
-  ];
 }
 
 /** A Lorentzian beside the power laws: where the model itself holds, and nothing where another law took over. */
@@ -94,13 +117,17 @@ function withTrap(
   return Object.freeze({ ...sumSpectra(smooth, lorentzian), ...extras });
 }
 
+function sidesOf(beyond: Beyond): Sides {
+  return { below: sideOf(beyond, "below"), above: sideOf(beyond, "above") };
+}
+
 function sideOf(beyond: Beyond, side: "below" | "above"): "segments" | "other" {
   const own = typeof beyond === "object" ? beyond[side] : beyond;
   return own === "segments" ? "segments" : "other";
 }
 
-function formulaNote(side: "below" | "above", edge: number): string {
-  return `${side === "below" ? "Below" : "Above"} ${edge} Hz there are no fitted points; the model's own formula goes on.`;
+function formulaNote(side: "below" | "above", edge: number, what: string): string {
+  return `${side === "below" ? "Below" : "Above"} ${Number(edge.toPrecision(4))} Hz there are no ${what}; the model's own formula goes on.`;
 }
 
 function lawFrom(at: number, level: number, { exponent }: BeyondLaw): PowerLawTerm {
@@ -124,7 +151,7 @@ function within(
 type Sides = { readonly below: "segments" | "other"; readonly above: "segments" | "other" };
 
 function parameterSensitivity(
-  { model, parameters }: RefinedFit,
+  { model, parameters }: FittedModel,
   covariance: readonly (readonly number[])[],
   span: readonly [number, number],
   sides: Sides,

@@ -13,6 +13,7 @@ export interface FitFinding {
     | "misreading"
     | "rises-at-the-top"
     | "falls-at-the-top"
+    | "bends-at-the-top"
     | "departs-at-the-bottom"
     | "scatter-above-stated";
   readonly message: string;
@@ -84,7 +85,7 @@ function departures({ points, residuals, misreadings }: Judged): FitFinding[] {
   const off = Array.from(residuals, (value, i) => value * (points.weight[i] as number));
   const known = new Set(misreadings.map(({ frequency }) => frequency));
   const usable = off.map((value, i) => (known.has(points.points[i]?.frequency ?? 0) ? 0 : value));
-  const findings: FitFinding[] = [];
+  const findings: FitFinding[] = bend(points, known);
   const top = runLength(usable.toReversed());
   if (top.length > 0) {
     const from = points.points[points.points.length - top.length]?.frequency ?? 0;
@@ -104,6 +105,19 @@ function departures({ points, residuals, misreadings }: Judged): FitFinding[] {
     });
   }
   return findings;
+}
+
+/** Two suspects side by side at the top are a curve that bends there rather than two slips of the pen. */
+function bend({ points }: FitPoints, suspected: ReadonlySet<number>): FitFinding[] {
+  let first = points.length;
+  while (first > 0 && suspected.has(points[first - 1]?.frequency ?? 0)) first -= 1;
+  if (points.length - first < 2 || first === 0) return [];
+  return [
+    {
+      code: "bends-at-the-top",
+      message: `The suspected points are the last ones, from ${short(points[first]?.frequency ?? 0)} Hz up: the curve may bend there (a loop that peaks and rolls off); fit up to ${short(points[first - 1]?.frequency ?? 0)} Hz?`,
+    },
+  ];
 }
 
 function runLength(off: readonly number[]): { readonly length: number; readonly sign: number } {

@@ -1,10 +1,22 @@
+import { arrayBlock } from "../numerics/array-block.js";
 import { dampedLeastSquares } from "../numerics/damped-least-squares.js";
-import { linearLeastSquares } from "../numerics/linear-least-squares.js";
 import type { FitModel } from "./fit-model.js";
 import type { FitPoints } from "./fit-points.js";
+import { firstStart, moreStarts } from "./start.js";
 
-/** Statistics need no more; polishing steps find the last digits where there is a minimum. */
-const solverOptions = Object.freeze({ mostSteps: 80, stallTolerance: 1e-12, mostStalled: 3 });
+/** A good start needs little damping; what the sum of squares no longer shows is no statistics either. */
+const solverOptions = Object.freeze({
+  damping: 1e-3,
+  stepTolerance: 1e-14,
+  gainTolerance: 1e-13,
+  mostSteps: 300,
+  stallTolerance: 1e-13,
+  mostStalled: 5,
+  polish: false,
+});
+
+/** A term too many runs off to where it does nothing; its last millionth of the sum of squares decides nothing. */
+const threeTermOptions = Object.freeze({ ...solverOptions, mostSteps: 60, stallTolerance: 1e-9, mostStalled: 3 });
 
 /** A model with its best parameters. */
 export interface RefinedFit {
@@ -23,33 +35,69 @@ export interface RefinedFit {
   readonly converged: boolean;
 }
 
+/** How {@link refine} departs from the plain fit. */
+export interface RefineOptions {
+  /** One a point, 0 to 1: multiplies the weights of a robust pass. */
+  readonly trust?: Float64Array | undefined;
+  /** Parameters of a neighbouring fit, in place of the first start. */
+  readonly from?: ArrayLike<number>;
+}
+
+/** A first result above this χ² per degree may sit in the wrong valley. */
+const doubtfulPerDegree = 4;
+
 /**
- * The least squares of one model on log density from given starts; the best of them. The scale is linear in the logarithm, so
- * it is eliminated (variable projection, Golub and Pereyra 1973): the mean comes off residuals and slopes, and the solver
- * sees the other parameters only. `trust` (one a point, 0 to 1) multiplies the weights of a robust pass.
+ * The least squares of one model on log density. The scale is linear in the logarithm, so it is eliminated (variable
+ * projection, Golub and Pereyra 1973): the mean comes off residuals and slopes, and the solver sees the other parameters
+ * only. One start does where it ends well inside the points; else, and for models of three terms, the best of a grid are
+ * refined too (`refine.test.ts` compares with many starts).
  */
-export function refine(
-  model: FitModel,
-  points: FitPoints,
-  starts: readonly (readonly number[])[],
-  trust?: Float64Array,
-): RefinedFit {
+export function refine(model: FitModel, points: FitPoints, { trust, from }: RefineOptions = {}): RefinedFit {
   const weight =
     trust === undefined ? points.weight : points.weight.map((value, i) => value * Math.sqrt(trust[i] as number));
   const given = { ...points, weight };
+  if (model.parameters.length === 0) return assembled(model, given, nothingFound);
   const projected = projection(model, given);
-  const size = model.parameters.length;
-  if (size === 0) return assembled(model, given, new Float64Array(0), true);
   const rows = points.x.length + priorRows(model);
-  let best:
-    | { readonly parameters: Float64Array; readonly sumOfSquares: number; readonly converged: boolean }
-    | undefined;
-  for (const start of starts) {
-    const found = dampedLeastSquares(projected, start, rows, solverOptions);
-    if (best === undefined || found.sumOfSquares < best.sumOfSquares) best = found;
-  }
-  return assembled(model, given, best?.parameters ?? new Float64Array(size), best?.converged ?? false);
+  const options = model.parameters.length > 2 ? threeTermOptions : solverOptions;
+  const search = (start: ArrayLike<number>): Found => dampedLeastSquares(projected, start, rows, options);
+  let best = search(from ?? firstStart(model, points));
+  if (!settled(model, given, best, rows))
+    for (const start of moreStarts(model, points)) {
+      const found = search(start);
+      if (!(found.sumOfSquares >= best.sumOfSquares)) best = found;
+    }
+  return assembled(model, given, best);
 }
+
+/** Whether one search is enough: two terms at most, a corner among the points, and points that agree with it. */
+function settled(
+  model: FitModel,
+  { x }: FitPoints,
+  { parameters, sumOfSquares, converged, inverse }: Found,
+  rows: number,
+): boolean {
+  if (model.name === "flicker") return converged; // linear in its only parameter
+  if (model.parameters.length > 2 || !converged || inverse === undefined) return false;
+  if (sumOfSquares > doubtfulPerDegree * Math.max(rows - parameters.length - 1, 1)) return false;
+  const corner = parameters[0] as number;
+  return corner > (x[0] as number) && corner < (x.at(-1) as number);
+}
+
+interface Found {
+  readonly parameters: Float64Array;
+  readonly sumOfSquares: number;
+  readonly converged: boolean;
+  /** Covariance of the parameters without the scale, row by row. */
+  readonly inverse: Float64Array | undefined;
+}
+
+const nothingFound: Found = Object.freeze({
+  parameters: new Float64Array(0),
+  sumOfSquares: 0,
+  converged: true,
+  inverse: new Float64Array(0),
+});
 
 function priorRows({ exponent, exponentAt }: FitModel): number {
   return exponent.kind === "prior" && exponentAt >= 0 ? 1 : 0;
@@ -59,30 +107,25 @@ function priorRows({ exponent, exponentAt }: FitModel): number {
 function projection(model: FitModel, { x, y, weight }: FitPoints) {
   const size = model.parameters.length;
   const count = x.length;
-  const slopes = new Float64Array(size);
-  let square = 0;
-  for (let i = 0; i < count; i += 1) square += (weight[i] as number) ** 2;
+  const square = squareOf(weight);
   const means = new Float64Array(size);
   return (parameters: Float64Array, residuals: Float64Array, jacobian: Float64Array): void => {
+    model.shapeOver(x, parameters, residuals, jacobian);
     means.fill(0);
     let mean = 0;
     for (let i = 0; i < count; i += 1) {
       const w = weight[i] as number;
       const share = (w * w) / square;
-      const value = 0.5 * model.shapeAt(x[i] as number, parameters, slopes) - (y[i] as number);
+      const value = 0.5 * (residuals[i] as number) - (y[i] as number);
       residuals[i] = value;
       mean += share * value;
-      for (let p = 0; p < size; p += 1) {
-        const slope = 0.5 * (slopes[p] as number);
-        jacobian[i * size + p] = slope;
-        means[p] = (means[p] as number) + share * slope;
-      }
+      for (let p = 0; p < size; p += 1) means[p] = (means[p] as number) + share * (jacobian[i * size + p] as number);
     }
     for (let i = 0; i < count; i += 1) {
       const w = weight[i] as number;
       residuals[i] = w * ((residuals[i] as number) - mean);
       for (let p = 0; p < size; p += 1)
-        jacobian[i * size + p] = w * ((jacobian[i * size + p] as number) - (means[p] as number));
+        jacobian[i * size + p] = 0.5 * w * ((jacobian[i * size + p] as number) - (means[p] as number));
     }
     if (model.exponent.kind !== "prior" || model.exponentAt < 0) return;
     const { mean: expected, standardUncertainty } = model.exponent;
@@ -91,45 +134,63 @@ function projection(model: FitModel, { x, y, weight }: FitPoints) {
   };
 }
 
+function squareOf(weight: Float64Array): number {
+  let square = 0;
+  for (let i = 0; i < weight.length; i += 1) square += (weight[i] as number) ** 2;
+  return square;
+}
+
 /** Scale, residuals and the covariance of all parameters at a solution. */
 function assembled(
   model: FitModel,
   { x, y, weight }: FitPoints,
-  parameters: Float64Array,
-  converged: boolean,
+  { parameters, converged, inverse }: Found,
 ): RefinedFit {
   const size = model.parameters.length;
   const count = x.length;
-  const slopes = new Float64Array(size);
-  const shape = x.map((at) => model.shapeAt(at, parameters, slopes));
-  let square = 0;
-  let sum = 0;
+  const means = new Float64Array(size);
+  const [residuals, slopes] = arrayBlock([count, count * size]);
+  model.shapeOver(x, parameters, residuals, slopes);
+  const square = squareOf(weight);
+  let mean = 0;
   for (let i = 0; i < count; i += 1) {
-    const w2 = (weight[i] as number) ** 2;
-    square += w2;
-    sum += w2 * ((y[i] as number) - 0.5 * (shape[i] as number));
+    const share = (weight[i] as number) ** 2 / square;
+    const value = (y[i] as number) - 0.5 * (residuals[i] as number);
+    residuals[i] = value;
+    mean += share * value;
+    for (let p = 0; p < size; p += 1) means[p] = (means[p] as number) + share * (slopes[i * size + p] as number);
   }
-  const scale = (2 * sum) / square;
-  const residuals = y.map((value, i) => value - 0.5 * ((shape[i] as number) + scale));
   let chiSquare = 0;
-  for (let i = 0; i < count; i += 1) chiSquare += ((weight[i] as number) * (residuals[i] as number)) ** 2;
-  const prior = priorRows(model);
-  const columns = size + 1;
-  const matrix = new Float64Array((count + prior) * columns);
   for (let i = 0; i < count; i += 1) {
-    model.shapeAt(x[i] as number, parameters, slopes);
-    matrix[i * columns] = 0.5 * (weight[i] as number);
-    for (let p = 0; p < size; p += 1) matrix[i * columns + p + 1] = 0.5 * (weight[i] as number) * (slopes[p] as number);
+    residuals[i] = (residuals[i] as number) - mean;
+    chiSquare += ((weight[i] as number) * (residuals[i] as number)) ** 2;
   }
-  if (prior === 1 && model.exponent.kind === "prior") {
-    const { mean, standardUncertainty } = model.exponent;
-    chiSquare += (((parameters[model.exponentAt] as number) - mean) / standardUncertainty) ** 2;
-    matrix[count * columns + model.exponentAt + 1] = 1 / standardUncertainty;
+  const prior = priorRows(model);
+  if (model.exponent.kind === "prior" && prior === 1) {
+    const { mean: expected, standardUncertainty } = model.exponent;
+    chiSquare += (((parameters[model.exponentAt] as number) - expected) / standardUncertainty) ** 2;
   }
-  const inverse = linearLeastSquares(matrix, new Float64Array(count + prior), columns)?.inverse;
-  const covariance =
-    inverse === undefined
-      ? undefined
-      : Array.from({ length: columns }, (_, row) => Array.from(inverse.subarray(row * columns, (row + 1) * columns)));
-  return { model, scale, parameters, chiSquare, degrees: count + prior - columns, covariance, residuals, converged };
+  const covariance = inverse === undefined ? undefined : withScale(inverse, means, 4 / square);
+  return {
+    model,
+    scale: 2 * mean,
+    parameters,
+    chiSquare,
+    degrees: count + prior - size - 1,
+    covariance,
+    residuals,
+    converged,
+  };
+}
+
+/**
+ * The covariance with the eliminated scale put back in front: the scale is the weighted mean of what the shape leaves, so it
+ * moves by −means·δ with the parameters and by its own scatter besides.
+ */
+function withScale(inverse: Float64Array, means: Float64Array, ownVariance: number): readonly (readonly number[])[] {
+  const size = means.length;
+  const rows = Array.from({ length: size }, (_, row) => Array.from(inverse.subarray(row * size, (row + 1) * size)));
+  const along = rows.map((row) => -row.reduce((sum, value, p) => sum + value * (means[p] as number), 0));
+  const variance = along.reduce((sum, value, p) => sum - value * (means[p] as number), ownVariance);
+  return [[variance, ...along], ...rows.map((row, p) => [along[p] as number, ...row])];
 }

@@ -1,4 +1,5 @@
 import type { QuadratureRule } from "./adaptive.js";
+import { arrayBlock } from "./array-block.js";
 import { logRatio } from "./power-law-integral.js";
 
 /** Five-point Gauss–Legendre on [−1, 1] (Abramowitz, Stegun 25.4.30, in closed form). */
@@ -20,8 +21,7 @@ const widest = 1.2;
 export function shortPanelRule(edges: readonly number[]): QuadratureRule {
   let panels = 0;
   for (let index = 1; index < edges.length; index += 1) panels += panelsIn(edges, index);
-  const nodes = new Float64Array(panels * places.length);
-  const weights = new Float64Array(nodes.length);
+  const [nodes, weights] = arrayBlock([panels * places.length, panels * places.length]);
   let k = 0;
   for (let index = 1; index < edges.length; index += 1) {
     const from = edges[index - 1] as number;

@@ -76,5 +76,5 @@ function resolveSide(name: string, side: BeyondSide, ownExponent: number): Beyon
 /** The sentence a report prints about one side. */
 export function beyondNote(name: "below" | "above", edgeHz: number, law: BeyondLaw): string {
   const known = law.standardUncertainty > 0 ? ` ± ${law.standardUncertainty}` : "";
-  return `${name === "below" ? "Below" : "Above"} ${edgeHz} Hz there are no points; the power density goes on as f^−a with a = ${Number(law.exponent.toPrecision(4))}${known}.`;
+  return `${name === "below" ? "Below" : "Above"} ${Number(edgeHz.toPrecision(4))} Hz there are no points; the power density goes on as f^−a with a = ${Number(law.exponent.toPrecision(4))}${known}.`;
 }

@@ -3,16 +3,17 @@ import { normalFrom, uniformFrom } from "../../../../test/support/random.js";
 import { bandNoise } from "../../src/band/band-noise.js";
 import { type AxesDescription, calibrateAxes } from "../../src/curve/calibrate-axes.js";
 import { pointsFromPicks } from "../../src/curve/points-from-picks.js";
-import { fitCurve } from "../../src/fit/fit-curve.js";
+import { type FittedCurve, fitCurve } from "../../src/fit/fit-curve.js";
+import type { Sensitivity } from "../../src/spectrum/spectrum.js";
 import { whiteFlicker } from "../../src/spectrum/white-flicker.js";
 
 /** Half a pixel on every tick, reference point and pick: what the errors stated must account for. */
 const sigma = 0.5;
 
-test("floor and rms of 500 plots, drawn, turned and picked with half a pixel of noise, scatter as stated", () => {
+test("floor, corner and rms of 500 plots, drawn, turned and picked with half a pixel of noise, scatter as stated", () => {
   const uniform = uniformFrom(314);
   const normal = normalFrom(uniform);
-  const scores: Record<"floor" | "rms", number[]> = { floor: [], rms: [] };
+  const scores: Record<"floor" | "corner" | "rms", number[]> = { floor: [], corner: [], rms: [] };
   for (let run = 0; run < 500; run += 1) {
     const truth = { floor: 10 ** (-9 + 2 * uniform()), cornerHz: 10 ** (1 + uniform()) };
     const size = 300 * 10 ** uniform();
@@ -64,25 +65,64 @@ test("floor and rms of 500 plots, drawn, turned and picked with half a pixel of 
     });
     const plot = calibrateAxes({ ...axes, allowFarExtrapolation: true });
     const curve = pointsFromPicks(plot, picks, { pickErrorPixels: sigma });
-    const fit = fitCurve(curve, { model: "floorAndFlicker", exponent: 1 });
+    const fit = fitCurve(curve, { model: "floorAndFlicker", exponent: 1, beyond: "segments" });
     // a band well inside the points; the fit carries the calibration's errors too
     const band = { fromHz: 0.2, toHz: 10 };
-    const atFloor = bandNoise(fit, { fromHz: 3e4, toHz: 3.01e4 });
-    scores.floor.push(
-      Math.log(atFloor.rms / bandNoise(spectrum, { fromHz: 3e4, toHz: 3.01e4 }).rms) /
-        (atFloor.standardUncertainty ?? 0),
-    );
+    // floor and corner with everything that moves them: the picks through the fit, the calibration through all points
+    const moved = uncertaintyOf(fit);
+    scores.floor.push(Math.log((fit.floor ?? 0) / truth.floor) / moved.floor);
+    scores.corner.push(Math.log((fit.cornerHz ?? 0) / truth.cornerHz) / moved.corner);
     const noise = bandNoise(fit, band);
     scores.rms.push(Math.log(noise.rms / bandNoise(spectrum, band).rms) / (noise.standardUncertainty ?? 0));
   }
   const spread = (values: readonly number[]): number =>
     Math.sqrt(values.reduce((sum, z) => sum + z * z, 0) / values.length);
   console.log(
-    `errors over stated uncertainty: floor ${spread(scores.floor).toFixed(3)}, rms ${spread(scores.rms).toFixed(3)}`,
+    `errors over stated uncertainty: ${Object.entries(scores)
+      .map(([name, values]) => `${name} ${spread(values).toFixed(3)}`)
+      .join(", ")}`,
   );
-  for (const values of [scores.floor, scores.rms]) {
-    // a little below 1: √(χ²/degree) widens above 1 and never narrows
-    expect(spread(values)).toBeGreaterThan(0.85);
+  for (const values of Object.values(scores)) {
+    expect(spread(values)).toBeGreaterThan(0.9);
     expect(spread(values)).toBeLessThan(1.1);
   }
 });
+
+/** Standard uncertainty of ln floor and ln corner from every group of a fit's sensitivities, by the slopes at the two ends. */
+function uncertaintyOf(fit: FittedCurve): { readonly floor: number; readonly corner: number } {
+  const corner = fit.cornerHz ?? 1;
+  let [floorSquare, cornerSquare] = [0, 0];
+  for (const group of fit.sensitivities ?? []) {
+    // far above the corner S is the floor's power, far below it is floor² · corner / f
+    const slopesAt = (hz: number): Float64Array => {
+      const slopes = new Float64Array(group.count);
+      group.gradientAt(hz, (parameter, slope) => {
+        slopes[parameter] = (slopes[parameter] ?? 0) + slope;
+      });
+      return slopes;
+    };
+    const [low, high] = [slopesAt(corner * 1e-3), slopesAt(corner * 1e3)];
+    floorSquare += quadratic(
+      group.covariance,
+      high.map((slope) => 0.5 * slope),
+    );
+    cornerSquare += quadratic(
+      group.covariance,
+      low.map((slope, index) => slope - (high[index] ?? 0)),
+    );
+  }
+  return { floor: Math.sqrt(floorSquare), corner: Math.sqrt(cornerSquare) };
+}
+
+function quadratic(covariance: Sensitivity["covariance"], slopes: Float64Array): number {
+  const entry = (row: number, column: number): number =>
+    "variances" in covariance
+      ? row === column
+        ? (covariance.variances[row] ?? 0)
+        : 0
+      : (covariance.matrix[row]?.[column] ?? 0);
+  return slopes.reduce(
+    (sum, one, row) => sum + one * slopes.reduce((inner, other, column) => inner + other * entry(row, column), 0),
+    0,
+  );
+}

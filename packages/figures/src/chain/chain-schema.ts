@@ -1,6 +1,6 @@
+import { type JsonSchema, kind, record, text } from "../file/json-schema.js";
 import { noiseSchema, sourceSchema } from "./chain-sources.js";
 import { filterKinds } from "./filter-kinds.js";
-import { type JsonSchema, kind, record, text } from "./json-schema.js";
 
 const to = (name: string): JsonSchema => ({ $ref: `#/$defs/${name}` });
 

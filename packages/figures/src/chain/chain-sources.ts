@@ -1,4 +1,4 @@
-import { type JsonSchema, kind, record, text } from "./json-schema.js";
+import { type JsonSchema, kind, record, text } from "../file/json-schema.js";
 
 type Fields = Readonly<Record<string, JsonSchema>>;
 

@@ -9,13 +9,10 @@ import {
   type Spectrum,
   whiteFlicker,
 } from "@quietband/core";
-import { amplifierStage } from "./amplifier-stage.js";
-import type { BudgetSource } from "./budget-options.js";
+import { malformedAt } from "../file/check-against-schema.js";
 import {
   bandAt,
-  type ChainPlace,
-  filterAt,
-  gainAt,
+  type FilePlace,
   madeAt,
   numberAt,
   placeAt,
@@ -24,8 +21,10 @@ import {
   textAt,
   valueAt,
   wordsAt,
-} from "./chain-place.js";
-import { malformedAt } from "./check-against-schema.js";
+} from "../file/file-place.js";
+import { amplifierStage } from "./amplifier-stage.js";
+import type { BudgetSource } from "./budget-options.js";
+import { filterAt, gainAt } from "./chain-place.js";
 import { namedSpectrum } from "./named-spectrum.js";
 import { noiseAcross } from "./noise-across.js";
 import type { NoiseSource } from "./noise-source.js";
@@ -50,7 +49,7 @@ export interface ChainContext {
 }
 
 /** The sources that one record of the file stands for: one, or the parts of a stage. */
-export function readChainSource(place: ChainPlace, context: ChainContext): BudgetSource[] {
+export function readChainSource(place: FilePlace, context: ChainContext): BudgetSource[] {
   const { pointer, fields } = place;
   const name = textAt(place, "name");
   const [enters, partFactor] = [wordsAt(place, "enters"), numberAt(place, "partFactor")];
@@ -89,7 +88,7 @@ interface OneSource {
   readonly seen?: boolean;
 }
 
-type Reader = (place: ChainPlace, context: ChainContext) => OneSource;
+type Reader = (place: FilePlace, context: ChainContext) => OneSource;
 
 const readers: Readonly<Record<string, Reader>> = Object.freeze({
   curve: (place, context) => ({ source: several(place, readNoise(place, context)) }),
@@ -142,12 +141,12 @@ const readers: Readonly<Record<string, Reader>> = Object.freeze({
   reference: readReference,
 });
 
-function readOne(place: ChainPlace, context: ChainContext): OneSource {
+function readOne(place: FilePlace, context: ChainContext): OneSource {
   return (readers[textAt(place, "kind")] as Reader)(place, context);
 }
 
 /** A noise typed from a plot or as a model, at a place of its own. */
-function readNoise(place: ChainPlace, context: ChainContext): Spectrum {
+function readNoise(place: FilePlace, context: ChainContext): Spectrum {
   if (place.fields["kind"] === "curve") return readCurveNoise(place, context);
   const floor = quantityAt(place, "floor");
   const [unit = "", per] = floor.unit.split("/√");
@@ -162,7 +161,7 @@ function readNoise(place: ChainPlace, context: ChainContext): Spectrum {
   });
 }
 
-function readCurveNoise(place: ChainPlace, { loadCurve }: ChainContext): Spectrum {
+function readCurveNoise(place: FilePlace, { loadCurve }: ChainContext): Spectrum {
   const { fields, pointer } = place;
   const file = textAt(place, "file");
   if (loadCurve === undefined)
@@ -190,27 +189,27 @@ function loaded(file: string, loadCurve: (file: string) => Curve): Curve {
   }
 }
 
-function fitOptions(place: ChainPlace): FitOptions {
+function fitOptions(place: FilePlace): FitOptions {
   const { model, exponent } = place.fields as Pick<FitOptions, "model" | "exponent">;
   return { model, exponent, fromHz: valueAt(place, "from", "Hz"), toHz: valueAt(place, "to", "Hz") };
 }
 
-function innerNoise(place: ChainPlace, key: string, context: ChainContext): Spectrum {
-  const inner = placeAt(place, key) as ChainPlace;
+function innerNoise(place: FilePlace, key: string, context: ChainContext): Spectrum {
+  const inner = placeAt(place, key) as FilePlace;
   return madeAt(inner.pointer, () => readNoise(inner, context));
 }
 
-function several(place: ChainPlace, spectrum: Spectrum): Spectrum {
+function several(place: FilePlace, spectrum: Spectrum): Spectrum {
   const count = numberAt(place, "parallel");
   return count === undefined ? spectrum : parallelParts(spectrum, count);
 }
 
-function temperatureOf(place: ChainPlace, { temperature }: ChainContext): Temperature {
+function temperatureOf(place: FilePlace, { temperature }: ChainContext): Temperature {
   if (temperature !== undefined) return temperature;
   throw malformedAt(place.pointer, 'a resistance needs the chain\'s "temperature", for instance "25 °C".');
 }
 
-function readStage(place: ChainPlace, context: ChainContext): ReturnType<typeof amplifierStage> {
+function readStage(place: FilePlace, context: ChainContext): ReturnType<typeof amplifierStage> {
   const noiseAt = (key: string): Spectrum | undefined =>
     place.fields[key] === undefined ? undefined : innerNoise(place, key, context);
   const { connection, q } = place.fields as { readonly connection: "inverting" | "nonInverting"; readonly q?: number };
@@ -231,12 +230,12 @@ function readStage(place: ChainPlace, context: ChainContext): ReturnType<typeof 
   });
 }
 
-function readReference(place: ChainPlace, context: ChainContext): OneSource {
+function readReference(place: FilePlace, context: ChainContext): OneSource {
   const noise = innerNoise(place, "noise", context);
   const source = referenceSpectrum({
     spectrum: noise,
     referenceVolts: quantityAt(place, "voltage", "V").value,
-    input: readInput(placeAt(place, "input") as ChainPlace),
+    input: readInput(placeAt(place, "input") as FilePlace),
     fromHz: context.fromHz,
     converter: place.fields["converter"] as ReferenceConverter | undefined,
     sampleRateHz: valueAt(place, "sampleRate", "Hz"),
@@ -247,7 +246,7 @@ function readReference(place: ChainPlace, context: ChainContext): OneSource {
   return source === undefined ? { source: noise, seen: false } : { source };
 }
 
-function readInput(place: ChainPlace): ReferenceInput {
+function readInput(place: FilePlace): ReferenceInput {
   if (place.fields["kind"] === "dc") return { kind: "dc", volts: quantityAt(place, "level", "V").value };
   return {
     kind: place.fields["kind"] as "sine" | "square" | "triangle",

@@ -1,23 +1,14 @@
-import { type Curve, MalformedDataError } from "@quietband/core";
+import type { Curve } from "@quietband/core";
 import { refuseUnknownKeys } from "../convert/domain.js";
+import { checkAgainstSchema, malformedAt, type SchemaDefinitions } from "../file/check-against-schema.js";
+import { bandAt, type FilePlace, numberAt, placesAt, quantityAt, textAt, wordsAt } from "../file/file-place.js";
+import type { JsonSchema } from "../file/json-schema.js";
+import { parseFile } from "../file/parse-file.js";
 import type { BudgetCorrelation, BudgetSource, BudgetStage, NoiseBudgetOptions } from "./budget-options.js";
-import {
-  bandAt,
-  type ChainPlace,
-  filterAt,
-  gainAt,
-  numberAt,
-  placesAt,
-  quantityAt,
-  textAt,
-  wordsAt,
-} from "./chain-place.js";
+import { filterAt, gainAt } from "./chain-place.js";
 import { chainSchema } from "./chain-schema.js";
-import { checkAgainstSchema, malformedAt, type SchemaDefinitions } from "./check-against-schema.js";
-import type { JsonSchema } from "./json-schema.js";
 import { zeroCelsius } from "./physical-constants.js";
 import { readChainSource } from "./read-chain-source.js";
-import { repeatedKey } from "./repeated-key.js";
 import type { Temperature } from "./temperature.js";
 
 /** What {@link readChain} takes besides the file. */
@@ -62,10 +53,10 @@ export interface Chain {
  */
 export function readChain(json: unknown, options: ReadChainOptions = {}): Chain {
   refuseUnknownKeys("readChain", ["loadCurve"], options);
-  const value = typeof json === "string" ? parsed(json) : json;
+  const value = typeof json === "string" ? parseFile(json, "A chain file") : json;
   const { $defs, ...whole } = chainSchema;
   checkAgainstSchema(value, whole as JsonSchema, $defs as SchemaDefinitions);
-  const top: ChainPlace = { fields: value as ChainPlace["fields"], pointer: "" };
+  const top: FilePlace = { fields: value as FilePlace["fields"], pointer: "" };
   const { fields } = top;
   const { fromHz, toHz } = bandAt(top, "band");
   const context = { temperature: temperatureOf(top), fromHz, loadCurve: options.loadCurve };
@@ -89,22 +80,8 @@ export function readChain(json: unknown, options: ReadChainOptions = {}): Chain 
   });
 }
 
-function parsed(json: string): unknown {
-  let value: unknown;
-  try {
-    value = JSON.parse(json);
-  } catch (error) {
-    throw new MalformedDataError(`A chain file must be JSON; ${error instanceof Error ? error.message : "it is not"}.`);
-  }
-  const twice = repeatedKey(json);
-  if (twice === undefined) return value;
-  throw new MalformedDataError(
-    `A chain file must give each key of a record once; "${twice.slice(0, 40)}" stands twice.`,
-  );
-}
-
 /** In °C or K, as typed. */
-function temperatureOf(top: ChainPlace): Temperature | undefined {
+function temperatureOf(top: FilePlace): Temperature | undefined {
   if (top.fields["temperature"] === undefined) return undefined;
   const { value, unit } = quantityAt(top, "temperature");
   if (unit === "°C" && value > -zeroCelsius) return { celsius: value };
@@ -115,7 +92,7 @@ function temperatureOf(top: ChainPlace): Temperature | undefined {
   );
 }
 
-function readStageOfPath(place: ChainPlace): BudgetStage {
+function readStageOfPath(place: FilePlace): BudgetStage {
   const { gain, change } = gainAt(place, "gain");
   if (change !== undefined)
     throw malformedAt(
@@ -126,7 +103,7 @@ function readStageOfPath(place: ChainPlace): BudgetStage {
 }
 
 /** A target in the unit that the sources have where they meet. */
-function targetOf(top: ChainPlace, [first]: readonly BudgetSource[]): NoiseBudgetOptions["target"] {
+function targetOf(top: FilePlace, [first]: readonly BudgetSource[]): NoiseBudgetOptions["target"] {
   if (top.fields["target"] === undefined || first === undefined) return undefined;
   return { rms: quantityAt(top, "target", first.unit ?? first.source.unit).value };
 }

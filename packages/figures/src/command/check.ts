@@ -1,8 +1,11 @@
-import { MalformedDataError, writeQuantity } from "@quietband/core";
+import { MalformedDataError, NoiseError, writeQuantity } from "@quietband/core";
+import type { BasisVerdict } from "../judge/basis-verdict.js";
+import type { FigureBasis } from "../judge/check-options.js";
 import { checkStatedFigure, type StatedFigureCheck } from "../judge/check-stated-figure.js";
+import type { Reconciler } from "../judge/reconcile.js";
 import type { Command } from "./command.js";
 import { beyondOptions, provenanceLines, readBeyond, readCurveInput } from "./curve-input.js";
-import { inColumns, short, signed } from "./noise-figures.js";
+import { type FigureLine, inColumns, short, signed } from "./noise-figures.js";
 import { readThrough } from "./through.js";
 import { plainNumber, quantityOption } from "./typed-values.js";
 
@@ -19,7 +22,14 @@ export const checkCommand: Command = {
       repeats: true,
     },
     { name: "of", value: "VOLTS", help: "what a figure in ppm is of" },
-    { name: "factor", value: "N", help: "peak-to-peak / RMS that the figure rests on; 6.6 by common practice" },
+    {
+      name: "basis",
+      value: "WORD",
+      help: "convention (a factor times the RMS) or record (what a record showed); both unless given",
+    },
+    { name: "factor", value: "N", help: "peak-to-peak / RMS of the convention; 6.6 by common practice" },
+    { name: "record", value: "SECONDS", help: "length of a record; 10s unless given" },
+    { name: "records", value: "N", help: "the figure is the largest of so many records; 1 unless given" },
     {
       name: "through",
       value: "FILTER",
@@ -31,7 +41,8 @@ export const checkCommand: Command = {
   ],
   example: {
     type: 'quietband check R1.csv --figure "7 µV peak-to-peak, 0.1 Hz to 10 Hz"',
-    answers: "What the points of R1.csv give for that band, the difference in dB, and what the comparison rests on.",
+    answers:
+      "Whether that figure agrees with the points of R1.csv, as a convention and as a record, and what rests on what.",
   },
   run(parsed, streams) {
     const { curve, name } = readCurveInput("check", parsed, streams);
@@ -44,52 +55,89 @@ export const checkCommand: Command = {
       );
     const options = {
       beyond: readBeyond(parsed),
+      basis: parsed.one("basis") as FigureBasis | undefined,
       factor: plainNumber(parsed, "factor"),
+      recordSeconds: quantityOption(parsed, "record", "s"),
+      records: plainNumber(parsed, "records"),
       weighting: readThrough(parsed.all("through")),
       relativeTo: quantityOption(parsed, "of", curve.unit),
     };
-    const checks = stated.map((text) => checkStatedFigure(curve, text, options));
+    const progress = streams.progress("checking", stated.length);
+    const checks = stated.map((text) => {
+      progress.step();
+      try {
+        return { text, check: checkStatedFigure(curve, text, options) };
+      } catch (error) {
+        // one of several figures may lie beyond the points: the others are still checked
+        if (error instanceof NoiseError && stated.length > 1) return { text, refused: error.message };
+        progress.end();
+        throw error;
+      }
+    });
+    progress.end();
     if (parsed.has("json")) {
-      streams.print(`${JSON.stringify({ curve: name, source: curve.source, checks }, undefined, 2)}\n`);
+      streams.print(
+        `${JSON.stringify({ curve: name, source: curve.source, checks: checks.map(({ check, ...refused }) => check ?? refused) }, undefined, 2)}\n`,
+      );
       return;
     }
-    streams.print(
-      [name, ...provenanceLines(curve), "", ...checks.flatMap((check) => [...checkLines(check, curve.unit), ""])].join(
-        "\n",
-      ),
-    );
+    const lines = checks.flatMap(({ text, check, refused }) => [
+      `Stated: ${text}`,
+      ...(check === undefined ? [`  not checked: ${refused}`] : checkLines(check)),
+      "",
+    ]);
+    streams.print([name, ...provenanceLines(curve), "", ...lines].join("\n"));
   },
 };
 
+const percent = (share: number): string => `${(100 * share).toFixed(1)} %`;
+
 /** One comparison in lines. */
-function checkLines(check: StatedFigureCheck, signalUnit: string): string[] {
-  const unit = check.figure.kind === "density" ? `${signalUnit}/√Hz` : signalUnit;
-  const { points, rounding, unknownMeasurement } = check.tolerance;
-  const percent = (share: number): string => `${(100 * share).toFixed(1)} %`;
-  const parts = [`points ${percent(points)}`, `rounding ${percent(rounding)}`];
-  if (unknownMeasurement > 0) parts.push(`unknown filter and records ${percent(unknownMeasurement)}`);
-  const basis = check.peakToPeak?.convention ?? (check.figure.kind === "rms" ? "RMS of the band" : "at that frequency");
+function checkLines(check: StatedFigureCheck): string[] {
+  const { figure, unit, stated } = check;
+  const digit = writeQuantity(figure.halfUnit * (stated / figure.value), unit, { digits: 1 });
+  const views: FigureLine[] = check.views.map(({ basis, predicted, words, noise, spread }) => ({
+    name: basis === "record" ? "as a record" : basis === "convention" ? "by convention" : "from the curve",
+    value: short(predicted, unit),
+    basis: `${words}; ± ${percent(noise.standardUncertainty ?? 0)} (k = 1)${spread > 0 ? `, spread ${percent(spread)}` : ""}`,
+  }));
   return [
-    `Stated: ${check.figure.text}`,
-    ...inColumns([
-      {
-        name: "stated",
-        value: short(check.stated, unit),
-        basis: `last digit ± ${writeQuantity(check.figure.halfUnit * (check.stated / check.figure.value), unit, { digits: 1 })}`,
-      },
-      { name: "from the curve", value: short(check.predicted, unit), basis },
-      {
-        name: "difference",
-        value: `${signed(check.differenceDb, 2)} dB`,
-        basis: `within a factor of ${check.withinFactor.toFixed(2)}`,
-      },
-      { name: "rests on", value: percent(check.tolerance.total), basis: `${parts.join(", ")} (k = 1)` },
-      {
-        name: "claim",
-        value: check.claim,
-        basis: `${percent(check.shareInsidePoints)} of the power inside the points`,
-      },
-    ]),
+    ...inColumns([{ name: "stated", value: short(stated, unit), basis: `last digit ± ${digit}` }, ...views]),
+    ...check.bases.flatMap((judged) => basisLines(judged, unit)),
+    `  Verdict: ${check.summary}.`,
     ...check.notes.map((note) => `  ${note}`),
   ];
+}
+
+function basisLines(
+  { basis, predicted, differenceDb, tolerance, expanded, ...rest }: BasisVerdict,
+  unit: string,
+): string[] {
+  const { points, rounding, records, filter } = tolerance;
+  const parts = [`points ${percent(points)}`, `rounding ${percent(rounding)}`];
+  if (records > 0) parts.push(`spread of records ${percent(records)}`);
+  if (filter > 0) parts.push(`unknown filter ${percent(filter)}`);
+  const heading = {
+    record: "As a record",
+    convention: "By convention",
+    rms: "Of the band",
+    density: "At that frequency",
+  }[basis];
+  return [
+    `  ${heading}: ${short(predicted, unit)}, difference ${signed(differenceDb, 2)} dB, ${rest.differenceOverExpanded.toFixed(2)} of the expanded uncertainty of ${percent(expanded.relative)} (95 %, k = ${expanded.k.toFixed(2)})`,
+    `    ${parts.join(", ")} (k = 1); a factor ${rest.smallestFactorSeen.toFixed(2)} would have been seen`,
+    ...(rest.reconcilers.length === 0 ? [] : [`    would agree with ${reconcilerWords(rest.reconcilers)}, each alone`]),
+  ];
+}
+
+function reconcilerWords(reconcilers: readonly Reconciler[]): string {
+  const value = (number: number, unit: string): string =>
+    unit === "" ? String(Number(number.toPrecision(3))) : writeQuantity(number, unit, { digits: 3 });
+  return reconcilers
+    .map(({ what, unit, taken, needed }) =>
+      needed === undefined
+        ? `no ${what} (taken ${value(taken, unit)})`
+        : `${what === "exponent" ? "an" : "a"} ${what} of ${value(needed, unit)} in place of ${value(taken, unit)}`,
+    )
+    .join(", ");
 }

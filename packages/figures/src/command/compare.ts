@@ -120,7 +120,13 @@ function readCandidates(
 ): { readonly candidates: readonly (Candidate & { readonly name: string })[]; readonly curves: readonly NamedCurve[] } {
   const read = (path: string): Curve => readCurve(path === "-" ? streams.readInput() : streams.readFile(path));
   const beyond = readBeyond(parsed);
-  const files = parsed.files.map((path) => ({ path, curve: read(path) }));
+  const progress = streams.progress("reading", parsed.files.length);
+  const files = parsed.files.map((path) => {
+    const curve = read(path);
+    progress.step();
+    return { path, curve };
+  });
+  progress.end();
   const curves = named(files);
   const names = curves.map(({ name }) => name);
   const gains = byName(parsed, "gain", names);

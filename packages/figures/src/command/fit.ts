@@ -1,15 +1,19 @@
 import {
+  type BandNoise,
+  type FitAgainstPoints,
   type FitModelName,
   type FitOptions,
   type FittedCurve,
+  fitAgainstPoints,
   fitCurve,
   MalformedDataError,
+  readBand,
   writeQuantity,
 } from "@quietband/core";
 import { residualBars } from "../show/residual-bars.js";
 import { textTable } from "../show/text-table.js";
 import type { Command } from "./command.js";
-import { provenanceLines, readCurveInput } from "./curve-input.js";
+import { beyondOptions, provenanceLines, readBeyond, readCurveInput } from "./curve-input.js";
 import { inColumns, short } from "./noise-figures.js";
 import { quantityOption } from "./typed-values.js";
 
@@ -28,6 +32,17 @@ export const fitCommand: Command = {
       help: "auto (the default), floor, flicker, floorAndFlicker, floorFlickerRandomWalk, floorFlickerLorentzian or floorFlickerRise",
     },
     { name: "downweight", value: "", help: "give grossly misread points no weight" },
+    {
+      name: "bump",
+      value: "FROM:TO",
+      help: "a bump that no model describes: its points stand for themselves",
+    },
+    {
+      name: "band",
+      value: "FROM:TO",
+      help: "also the noise of this band, by the model and by straight lines through the points",
+    },
+    ...beyondOptions,
     { name: "json", value: "", help: "everything as JSON" },
   ],
   example: {
@@ -37,20 +52,32 @@ export const fitCommand: Command = {
   },
   run(parsed, streams) {
     const { curve, name } = readCurveInput("fit", parsed, streams);
+    const beyond = readBeyond(parsed);
     const fit = fitCurve(curve, {
+      beyond,
       model: parsed.one("model") as FitModelName | "auto" | undefined,
       exponent: readExponent(parsed.one("exponent")),
       fromHz: quantityOption(parsed, "from", "Hz"),
       toHz: quantityOption(parsed, "to", "Hz"),
       misreadings: parsed.has("downweight") ? "downweight" : undefined,
+      bump: parsed.one("bump") === undefined ? undefined : readBand(parsed.one("bump") ?? ""),
     });
+    const typed = parsed.one("band");
+    const band = typed === undefined ? undefined : fitAgainstPoints(curve, fit, { ...readBand(typed), beyond });
     if (parsed.has("json")) {
       const { pieces: _, sensitivities: __, ...shown } = fit;
-      streams.print(`${JSON.stringify({ curve: name, source: curve.source, fit: shown }, undefined, 2)}\n`);
+      streams.print(`${JSON.stringify({ curve: name, source: curve.source, fit: shown, band }, undefined, 2)}\n`);
       return;
     }
     streams.print(
-      [`${name}: ${modelText(fit)}`, ...provenanceLines(curve), "", ...fitLines(fit, curve.unit), ""].join("\n"),
+      [
+        `${name}: ${modelText(fit)}`,
+        ...provenanceLines(curve),
+        "",
+        ...fitLines(fit, curve.unit),
+        ...(band === undefined ? [] : bandLines(band, typed ?? "")),
+        "",
+      ].join("\n"),
     );
   },
 };
@@ -82,8 +109,11 @@ export function modelText({ model }: FittedCurve): string {
 
 function parameterLines(fit: FittedCurve, unit: string): string[] {
   const { floor, cornerHz, exponent, standardErrors: errors } = fit;
+  const { k } = fit.coverage;
   const relative = (error: number | undefined): string =>
-    error === undefined ? "" : `± ${(100 * error).toFixed(1)} % (k = 1)`;
+    error === undefined
+      ? ""
+      : `± ${(100 * error).toFixed(1)} % (k = 1); 95 % within a factor ${Math.exp(k * error).toPrecision(3)} (k = ${k.toFixed(2)})`;
   const lines = [];
   if (floor !== undefined)
     lines.push({ name: "floor", value: short(floor, `${unit}/√Hz`), basis: relative(errors.floor) });
@@ -93,14 +123,32 @@ function parameterLines(fit: FittedCurve, unit: string): string[] {
     lines.push({
       name: "exponent",
       value: exponent.toFixed(3),
-      basis: errors.exponent === undefined ? "fixed" : `± ${errors.exponent.toFixed(3)} (k = 1)`,
+      basis:
+        errors.exponent === undefined
+          ? "fixed"
+          : `± ${errors.exponent.toFixed(3)} (k = 1); 95 % within ± ${(k * errors.exponent).toFixed(3)} (k = ${k.toFixed(2)})`,
     });
   lines.push({
     name: "χ² a degree",
     value: fit.chiSquarePerDegree.toFixed(2),
-    basis: `${fit.degreesOfFreedom} degrees of freedom`,
+    basis: `${fit.degreesOfFreedom} degrees of freedom; ${fit.coverage.basis}`,
   });
   return inColumns(lines);
+}
+
+/** The noise of a band both ways. */
+function bandLines({ fit, points, notes }: FitAgainstPoints, typed: string): string[] {
+  const line = (name: string, noise: BandNoise) => ({
+    name,
+    value: short(noise.rms, noise.unit),
+    basis: `RMS ± ${(100 * (noise.standardUncertainty ?? 0)).toFixed(1)} % (k = 1)`,
+  });
+  return [
+    "",
+    `Noise of ${typed}`,
+    ...inColumns([line("by the model", fit), line("by straight lines through the points", points)]),
+    ...[...notes, ...fit.notes.filter((note) => /^(Below|Above) /.test(note))].map((note) => `  ${note}`),
+  ];
 }
 
 function fitLines(fit: FittedCurve, unit: string): string[] {

@@ -1,4 +1,5 @@
-import { fitCurve, polyline, readBand, runningNoise } from "@quietband/core";
+import { densityInterval, type FittedCurve, fitCurve, polyline, readBand, runningNoise } from "@quietband/core";
+import type { DensityInterval } from "../show/density-options.js";
 import { densityPlot } from "../show/density-plot.js";
 import { runningNoisePlot } from "../show/running-noise-plot.js";
 import type { Command } from "./command.js";
@@ -50,6 +51,7 @@ export const plotCommand: Command = {
         band,
         floor: fit.floor,
         cornerHz: fit.cornerHz === 0 ? undefined : fit.cornerHz,
+        interval: { ...intervalOf(fit), label: "95 % of the model" },
         suspected: fit.misreadings.map(({ frequency }) => frequency),
         title,
         note,
@@ -60,6 +62,13 @@ export const plotCommand: Command = {
     else streams.writeFile(path, svg);
   },
 };
+
+/** Where the model lies with 95 % coverage, over the points it was fitted to. */
+function intervalOf(fit: FittedCurve): Pick<DensityInterval, "frequencies" | "lower" | "upper"> {
+  const degreesOfFreedom = fit.chiSquarePerDegree > 1 ? fit.degreesOfFreedom : undefined;
+  const { frequencies, lower, upper } = densityInterval(fit, { degreesOfFreedom });
+  return { frequencies, lower, upper };
+}
 
 /** Forty edges a decade, the last one exact. */
 function edgesBetween(fromHz: number, toHz: number): number[] {

@@ -8,4 +8,13 @@ export interface Streams {
   print(text: string): void;
   /** Standard error. */
   complain(text: string): void;
+  /** How far long work has come, for whoever watches; nothing where nobody does. */
+  progress(what: string, total: number): Progress;
+}
+
+/** Long work counted in steps. */
+export interface Progress {
+  step(): void;
+  /** Takes the display away. */
+  end(): void;
 }

@@ -1,8 +1,8 @@
 import { readFileSync } from "node:fs";
 import { expect, test } from "vitest";
 import { chainSchema } from "../../src/chain/chain-schema.js";
-import { checkAgainstSchema, type SchemaDefinitions } from "../../src/chain/check-against-schema.js";
-import type { JsonSchema } from "../../src/chain/json-schema.js";
+import { checkAgainstSchema, type SchemaDefinitions } from "../../src/file/check-against-schema.js";
+import type { JsonSchema } from "../../src/file/json-schema.js";
 import { everyKind } from "./support/every-kind.js";
 
 const { $defs, ...whole } = chainSchema;

@@ -20,6 +20,7 @@ function run(
     print: (text) => {
       said.out += text;
     },
+    progress: () => ({ step: () => {}, end: () => {} }),
     complain: (text) => {
       said.complaint += text;
     },
@@ -109,7 +110,30 @@ test("plot writes an SVG where it is told, or to standard output", () => {
 test("check compares every figure that a curve states", () => {
   const { out } = run(["check", "R1.csv"]);
   expect(out.match(/^Stated: /gm)).toHaveLength(2);
-  expect(out).toContain("claim");
+  expect(out).toMatch(/Verdict: agrees with the range of one record of 10 s, .*; lower than 6\.6 × RMS, .*, by 13 %\./);
+  expect(out).toMatch(/would agree with a peak-to-peak factor of 5\.7\d in place of 6\.6, /);
+});
+
+test("check goes on where one of several figures lies beyond the points, and says so", () => {
+  const { status, out } = run(["check", "X1.csv", "--of", "5V", "--below", "1"]);
+  expect(status).toBe(0);
+  expect(out).toMatch(/Verdict: lower than the range of one record of 10 s, .*, by a factor 2\.0/);
+  expect(out).toMatch(/not checked: .*ends at 100000 Hz/);
+});
+
+test("read writes the table that noise reads, with the calibration's residuals as comments", () => {
+  const { status, out } = run(["read", "R1-picks.json"]);
+  expect(status).toBe(0);
+  expect(out).toMatch(/^# calibration: worst is .* pixels off/m);
+  const noise = run(["noise", "-", "--band", "0.1Hz:10Hz"], out);
+  expect(noise.out).toMatch(/RMS +1\.2\d\d µV +± 0\.\d % \(k = 1\)/);
+  const shown = JSON.parse(run(["read", "R1-picks.json", "--json"]).out) as {
+    readonly calibration: { readonly residuals: readonly unknown[] };
+  };
+  expect(shown.calibration.residuals).toHaveLength(11);
+  const { written } = run(["read", "R1-picks.json", "--output", "R1-read.csv"]);
+  expect(written.get("R1-read.csv")).toBe(out);
+  expect(run(["read"]).complaint).toMatch(/takes one picks file, or - for standard input; got 0/);
 });
 
 test("budget ranks the sources of the invented strain channel: the amplifier decides", () => {
@@ -121,6 +145,29 @@ test("budget ranks the sources of the invented strain channel: the amplifier dec
   expect(run(["budget", "R1.csv"]).status).toBe(1);
 });
 
+describe("quietband fit", () => {
+  test("prints standard errors, the factor of their 95 % interval, and the noise of a band both ways", () => {
+    const { status, out } = run(["fit", "R1.csv", "--to", "1kHz", "--band", "0.1Hz:10Hz"]);
+    expect(status).toBe(0);
+    expect(out).toMatch(/floor +71\.60 nV\/√Hz +± 3\.8 % \(k = 1\); 95 % within a factor 1\.08 \(k = 1\.96\)/);
+    expect(out).toMatch(/Noise of 0\.1Hz:10Hz\n +by the model +1\.2\d+ µV/);
+    expect(out).toMatch(/by straight lines through the points +1\.248 µV/);
+  });
+
+  test("leaves a bump to its own points", () => {
+    const { out } = run(["fit", "R1.csv", "--bump", "4kHz:20kHz", "--band", "1kHz:20kHz"]);
+    expect(out).toMatch(/Left out of the fit: 4000 Hz \(bump\), 12000 Hz \(bump\), 20000 Hz \(bump\)/);
+    expect(out).toMatch(/by the model +12\.41 µV/);
+  });
+
+  test("says of suspects at the top that the curve may bend there", () => {
+    expect(run(["fit", "R1.csv"]).out).toMatch(/the curve may bend there .*; fit up to 4000 Hz\?/);
+  });
+});
+
+test("quietband plot draws the 95 % band of the model", () => {
+  expect(run(["plot", "R1.csv", "--to", "1kHz"]).out).toContain("95 % of the model");
+});
 interface Compared {
   readonly comparison: {
     readonly rows: readonly { readonly name: string; readonly rms: number }[];
@@ -164,5 +211,33 @@ describe("compare", () => {
     expect(run(["compare", "R1.csv", "R1.csv", "--band", "1Hz:2Hz"]).complaint).toMatch(/different names/);
     const { complaint, status } = run(["compare", "R1.csv", "--band", "1Hz:2Hz", "--current", "R2=1pA/√Hz"]);
     expect([status, complaint]).toEqual([1, 'Expected --current for one of the curves, R1=...; got "R2=1pA/√Hz".\n']);
+  });
+});
+
+describe("quietband report", () => {
+  test("writes one document in four forms, the plot embedded or beside", () => {
+    const { status, out } = run(["report", "strain-channel.json"]);
+    expect(status).toBe(0);
+    expect(out).toMatch(/to attack first +amplifier A1 +87 % of the power; halved, the total would be 10\.63 nV/);
+    const { written } = run([
+      "report",
+      "strain-channel.json",
+      "--as",
+      "markdown",
+      "--output",
+      "a.md",
+      "--plot",
+      "a.svg",
+    ]);
+    expect(written.get("a.md")).toContain("](a.svg)");
+    expect(written.get("a.svg")).toMatch(/^<svg /);
+    expect(run(["report", "strain-channel.json", "--as", "csv"]).out).toMatch(/^section,figure,value,unit/);
+    const { title } = JSON.parse(run(["report", "strain-channel.json", "--as", "json"]).out) as { title: string };
+    expect(title).toContain("INVENTED");
+  });
+
+  test("a form it does not know is a wrong use", () => {
+    const { status, complaint } = run(["report", "strain-channel.json", "--as", "pdf"]);
+    expect([status, complaint]).toEqual([2, "quietband report writes text, markdown, csv, json; got --as pdf.\n"]);
   });
 });
