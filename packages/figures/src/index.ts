@@ -102,7 +102,14 @@ export type { Reconciler } from "./judge/reconcile.js";
 export { picksSchema } from "./pick/picks-schema.js";
 export { type PickedPlot, readPicks } from "./pick/read-picks.js";
 export { type NoiseReportOptions, noiseReport } from "./report/noise-report.js";
-export type { NoiseReport, ReportEntry, ReportPlot, ReportSection } from "./report/report.js";
+export type {
+  NoiseReport,
+  ReportColumn,
+  ReportEntry,
+  ReportPlot,
+  ReportSection,
+  ReportTable,
+} from "./report/report.js";
 export { reportCsv } from "./report/report-csv.js";
 export { type ReportMarkdownOptions, reportMarkdown } from "./report/report-markdown.js";
 export type { ReportedNoise } from "./report/report-of-noise.js";

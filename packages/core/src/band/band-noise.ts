@@ -86,24 +86,24 @@ export function bandNoise(spectrum: Spectrum, options: BandNoiseOptions): BandNo
   const tolerance = relativeTolerance ?? bandNoiseTolerance;
   const band = [fromHz, toHz] as const;
   const found = requireReached(bandPower(spectrum, weighting, band, tolerance), spectrum.unit);
-  const parts = uncertaintyParts(spectrum, weighting, band);
+  const parts = uncertaintyParts(spectrum, weighting, band, found.power);
   const outsidePoints = shareOutsidePoints(spectrum, weighting, band, found.power);
-  return Object.freeze({
+  const noise: BandNoise = {
     rms: Math.sqrt(found.power),
     power: found.power,
     unit: spectrum.unit,
     fromHz,
     toHz,
     numericalError: relativeErrorOfRms(found),
-    ...(parts.length > 0 && {
-      standardUncertainty: Math.hypot(...parts.map((part) => part.relative)),
-      uncertaintyParts: parts,
-    }),
     outsidePoints,
     status: found.status,
     evaluations: found.evaluations,
     notes: notesFor(spectrum, outsidePoints),
-  });
+  };
+  // A record spread into another costs more than an exact integral; only what has an uncertainty pays for it.
+  if (parts.length === 0) return Object.freeze(noise);
+  const standardUncertainty = Math.hypot(...parts.map((part) => part.relative));
+  return Object.freeze({ ...noise, standardUncertainty, uncertaintyParts: parts });
 }
 
 /** What the spectrum assumes on a side counts only where the band reaches there. */

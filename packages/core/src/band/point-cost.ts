@@ -41,12 +41,14 @@ export interface PointCostOptions extends BandNoiseOptions {
  */
 export function pointCost(curve: Curve, { beyond, ...band }: PointCostOptions): readonly PointCost[] {
   const spectrum = polyline(curve, { beyond });
-  const { standardUncertainty = 0 } = bandNoise(spectrum, band);
+  const { standardUncertainty = 0, power } = bandNoise(spectrum, band);
   const points = spectrum.sensitivities?.slice(0, 1) ?? [];
-  const [responses = new Float64Array(curve.points.length)] = groupResponses(spectrum, points, band.weighting, [
-    band.fromHz,
-    band.toHz,
-  ]);
+  const [responses = new Float64Array(curve.points.length)] = groupResponses(
+    spectrum,
+    band.weighting,
+    [band.fromHz, band.toHz],
+    { groups: points, knownPower: power },
+  );
   return Object.freeze(
     curve.points.map(({ frequency, uncertainty }, index) => {
       const relative = (responses[index] ?? 0) * uncertainty;

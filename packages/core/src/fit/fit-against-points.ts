@@ -66,10 +66,10 @@ export function fitAgainstPoints(
   const lines = polyline(curve, { beyond });
   const byFit = bandNoise(fit, band);
   const byPoints = bandNoise(lines, band);
-  const [shares = new Float64Array(0)] = groupResponses(lines, lines.sensitivities?.slice(0, 1) ?? [], band.weighting, [
-    band.fromHz,
-    band.toHz,
-  ]);
+  const [shares = new Float64Array(0)] = groupResponses(lines, band.weighting, [band.fromHz, band.toHz], {
+    groups: lines.sensitivities?.slice(0, 1) ?? [],
+    knownPower: byPoints.power,
+  });
   const heavyPoints = curve.points
     .map(({ frequency, density, uncertainty }, index) => {
       const off = within(fit, frequency) ? Math.log(density / Math.sqrt(fit.powerDensityAt(frequency))) : 0;

@@ -71,7 +71,10 @@ export const budgetCommand: Command = {
         `  part-to-part spread: ${result.partSpread.text}`,
         "",
         table,
-        ...(result.notes.length > 0 ? ["", ...result.notes.map((note) => `  ${note}`)] : []),
+        "",
+        ...result.shares.flatMap(({ name, notes }) => notes.map((note) => `  ${name}: ${note}`)),
+        ...result.notes.map((note) => `  ${note}`),
+        ...(result.target === undefined ? [] : [`  ${result.target.text}`]),
         "",
       ].join("\n"),
     );

@@ -1,5 +1,7 @@
 import { csvTable } from "../show/csv-table.js";
-import type { NoiseReport } from "./report.js";
+import type { TableCell } from "../show/table.js";
+import type { NoiseReport, ReportTable } from "./report.js";
+import { rowName } from "./table-notes.js";
 
 /**
  * The numbers of a report as CSV (RFC 4180): one row a number, with its section, unit, basis and assumption; tables follow as
@@ -19,24 +21,20 @@ import type { NoiseReport } from "./report.js";
 export function reportCsv({ sections }: NoiseReport): string {
   const rows = sections.flatMap(({ heading, entries, table }) => [
     ...entries.map(({ name, value, unit, basis, assumption }) => [heading, name, value, unit, basis, assumption ?? ""]),
-    ...(table?.rows ?? []).flatMap((row) => {
-      const named = row.findIndex((cell) => typeof cell === "string" && cell !== "");
-      return row.flatMap((cell, index) =>
-        index === named || cell === ""
-          ? []
-          : [
-              [
-                heading,
-                `${named < 0 ? "row" : String(row[named])}, ${table?.columns[index]?.heading ?? ""}`,
-                cell,
-                table?.columns[index]?.unit ?? "",
-                "",
-                "",
-              ],
-            ],
-      );
-    }),
+    ...(table === undefined ? [] : tableRows(heading, table)),
   ]);
   const columns = ["section", "figure", "value", "unit", "rests on", "assumed"].map((name) => ({ heading: name }));
   return csvTable({ columns, rows });
+}
+
+/** A row a cell: a table inside a table of numbers. */
+function tableRows(section: string, { columns, rows, assumptions = [] }: ReportTable): TableCell[][] {
+  return rows.flatMap((row, index) => {
+    const name = rowName(row);
+    return row.flatMap((cell, place) => {
+      if (cell === "" || cell === name) return [];
+      const { heading = "", unit = "", basis = "" } = columns[place] ?? {};
+      return [[section, `${name}, ${heading}`, cell, unit, basis, assumptions[index] ?? ""]];
+    });
+  });
 }

@@ -1,6 +1,7 @@
 import { escapeMarkdown, markdownTable } from "../show/markdown-table.js";
 import { entryText } from "./entry-text.js";
 import type { NoiseReport, ReportPlot, ReportSection } from "./report.js";
+import { tableNotes } from "./table-notes.js";
 
 /** Where the plots of a Markdown report are. */
 export interface ReportMarkdownOptions {
@@ -50,10 +51,11 @@ function sectionLines({ entries, table, notes }: ReportSection): string[] {
     ],
     rows: entries.map((entry) => [entry.name, entryText(entry), entry.basis, entry.assumption ?? ""]),
   });
+  const said = [...(table === undefined ? [] : tableNotes(table)), ...notes];
   return [
     ...(entries.length === 0 ? [] : [figures]),
     ...(table === undefined ? [] : [...(entries.length === 0 ? [] : [""]), markdownTable(table)]),
-    ...(notes.length === 0 ? [] : ["", ...notes.map((note) => `- ${escapeMarkdown(note)}`)]),
+    ...(said.length === 0 ? [] : ["", ...said.map((note) => `- ${escapeMarkdown(note)}`)]),
   ];
 }
 

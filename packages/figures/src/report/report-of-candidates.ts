@@ -23,20 +23,26 @@ export function reportOfCandidates({ unit, rows, fromHz, toHz, notes }: CurveCom
       columns: [
         { heading: "rank" },
         { heading: "candidate" },
-        { heading: "RMS", unit },
-        { heading: "± (k = 1)" },
+        { heading: "RMS", unit, digits: 4, basis: "through the path" },
+        { heading: "± (k = 1)", unit: "%", digits: 2 },
         { heading: "over the quietest", digits: 4 },
-        { heading: "beyond the points" },
+        { heading: "beyond the points", align: "right", basis: "share of the power" },
       ],
       rows: rows.map(({ rank, name, rms, standardUncertainty, overBest, outsidePoints }) => [
         rank,
         name,
         rms,
-        standardUncertainty === undefined ? "" : percent(standardUncertainty),
+        standardUncertainty === undefined ? "" : 100 * standardUncertainty,
         overBest,
-        percent(outsidePoints.below + outsidePoints.above),
+        beyond(outsidePoints.below + outsidePoints.above),
       ]),
+      assumptions: rows.map(({ notes: own }) => own.join(" ")),
     },
-    notes: [...notes, ...rows.flatMap(({ name, notes: own }) => own.map((note) => `${name}: ${note}`))],
+    notes,
   };
+}
+
+/** What a filter leaves of the frequencies beyond the points is not worth a number. */
+function beyond(share: number): string {
+  return share < 1e-6 ? "none" : percent(share);
 }

@@ -33,10 +33,15 @@ export function reportOfReference({ path, byUse }: ReportedReference): ReportSec
     ...(byUse !== undefined && {
       table: {
         columns: [
-          { heading: "use of the range", unit: "%", digits: 3 },
-          { heading: "through the reference", unit },
-          { heading: "with all other noise", unit },
-          { heading: "SNR", unit: "dB" },
+          {
+            heading: "use of the range",
+            unit: "%",
+            digits: 3,
+            basis: "input over reference voltage, of a sine its peak",
+          },
+          { heading: "through the reference", unit, digits: 4 },
+          { heading: "with all other noise", unit, digits: 4 },
+          { heading: "SNR", unit: "dB", digits: 4, basis: "input over all noise" },
         ],
         rows: byUse.map(({ share, rms: own, totalRms, snrDb }) => [100 * share, own, totalRms, snrDb ?? ""]),
       },

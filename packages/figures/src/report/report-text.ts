@@ -2,6 +2,7 @@ import { padText, terminalWidth } from "../show/terminal-width.js";
 import { textTable } from "../show/text-table.js";
 import { entryText } from "./entry-text.js";
 import type { NoiseReport, ReportSection } from "./report.js";
+import { tableNotes } from "./table-notes.js";
 
 /**
  * A report as plain text, for a terminal or a mail; plots are only named.
@@ -48,5 +49,6 @@ function sectionLines({ entries, table, notes }: ReportSection): string[] {
             .split("\n")
             .map((line) => `  ${line}`),
         ];
-  return [...lines, ...tableLines, ...(notes.length === 0 ? [] : ["", ...notes.map((note) => `  ${note}`)])];
+  const said = [...(table === undefined ? [] : tableNotes(table)), ...notes];
+  return [...lines, ...tableLines, ...(said.length === 0 ? [] : ["", ...said.map((note) => `  ${note}`)])];
 }

@@ -1,4 +1,4 @@
-import type { Table } from "../show/table.js";
+import type { Table, TableColumn } from "../show/table.js";
 
 /** A number of a report: what it is, what it rests on, and what was assumed for it. */
 export interface ReportEntry {
@@ -15,11 +15,23 @@ export interface ReportEntry {
   readonly digits?: number;
 }
 
+/** A column of a report's table, and what its numbers rest on. */
+export interface ReportColumn extends TableColumn {
+  readonly basis?: string;
+}
+
+/** A table of a report. */
+export interface ReportTable extends Table {
+  readonly columns: readonly ReportColumn[];
+  /** What was assumed for each row; an empty text where nothing was. */
+  readonly assumptions?: readonly string[];
+}
+
 /** One part of a report. */
 export interface ReportSection {
   readonly heading: string;
   readonly entries: readonly ReportEntry[];
-  readonly table?: Table;
+  readonly table?: ReportTable;
   /** Sentences that a reader must see. */
   readonly notes: readonly string[];
 }

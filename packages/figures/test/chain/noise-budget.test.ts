@@ -340,6 +340,21 @@ describe("a target", () => {
     expectRelative(noiseBudget({ ...options, toHz }).rms, 5e-8, 1e-11);
   });
 
+  test("is met among a hundred curves that bend at places of their own, each through its own filter", () => {
+    const curves = Array.from({ length: 100 }, (_, k) => ({
+      name: `curve ${k}`,
+      source: polyline(
+        curveFromPoints(
+          [0.1, 1.1 + k / 100, 30 + k, 1e4].map((frequency) => ({ frequency, density: 1e-9 * (1 + 3 / frequency) })),
+          { unit: "V" },
+        ),
+      ),
+      weighting: k % 2 === 0 ? undefined : firstOrderLowPass({ cutoffHz: 100 + k }),
+    }));
+    const toHz = noiseBudget({ sources: curves, fromHz: 0.1, toHz: 1e3, target: { rms: 1e-7 } }).target?.toHz ?? 0;
+    expectRelative(noiseBudget({ sources: curves, fromHz: 0.1, toHz }).rms, 1e-7, 1e-12);
+  });
+
   test("that stated figures alone exceed is met by no bandwidth, and says so", () => {
     const { target } = noiseBudget({ sources, fromHz: 0, toHz: 400, target: { rms: 5e-8 } });
     expect(target).not.toHaveProperty("toHz");

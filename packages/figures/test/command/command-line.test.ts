@@ -140,6 +140,8 @@ test("budget ranks the sources of the invented strain channel: the amplifier dec
   const { status, out } = run(["budget", "strain-channel.json"]);
   expect(status).toBe(0);
   expect(out).toMatch(/amplifier A1 .*87 %/);
+  expect(out).toContain("bridge: 350 Ω at 25 °C.");
+  expect(out).toContain("18.03 nV RMS meets the target of 20 nV");
   const { written } = run(["budget", "strain-channel.json", "--output", "strain.svg"]);
   expect(written.get("strain.svg")).toMatch(/^<svg /);
   expect(run(["budget", "R1.csv"]).status).toBe(1);

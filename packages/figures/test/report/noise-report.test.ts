@@ -1,5 +1,5 @@
 import { readFileSync } from "node:fs";
-import { bandNoise, fitCurve, OutOfDomainError, polyline, readCurve } from "@quietband/core";
+import { bandNoise, fitCurve, OutOfDomainError, polyline, readCurve, whiteFlicker } from "@quietband/core";
 import { describe, expect, test } from "vitest";
 import { expectRelative } from "../../../../test/support/relative.js";
 import { compareCurves } from "../../src/chain/compare-curves.js";
@@ -7,6 +7,7 @@ import { noiseBudget } from "../../src/chain/noise-budget.js";
 import { readChain } from "../../src/chain/read-chain.js";
 import { referenceNoiseByUse } from "../../src/chain/reference-noise-by-use.js";
 import { referencePathNoise } from "../../src/chain/reference-path-noise.js";
+import { tone } from "../../src/chain/tone.js";
 import { converterFigures } from "../../src/convert/converter-figures.js";
 import { expectedPeakToPeak } from "../../src/convert/expected-peak-to-peak.js";
 import { checkStatedFigure } from "../../src/judge/check-stated-figure.js";
@@ -66,6 +67,43 @@ test("its numbers are those of its parts", () => {
   expect(entryOf("Stated figure", "verdict")?.value).toBe("agrees");
   expect(entryOf("Budget", "to attack first")?.value).toBe("amplifier A1");
   expectRelative(Number(entryOf("Model", "floor")?.value), 71.6e-9, 1e-3);
+});
+
+test("what each source assumes stands with it, and where the money is wasted", () => {
+  const text = reportText(report);
+  expect(text).toMatch(/\n {2}bridge: 350 Ω at 25 °C\.\n/);
+  expect(text).toMatch(
+    /excitation X1: .*Below 1 Hz there are no points.* 61 % of its power lies beyond its points\.\n/,
+  );
+  expect(entryOf("Budget", "hardly worth attacking")?.value).toBe("reference R1");
+  const row = reportCsv(report)
+    .split("\r\n")
+    .find((line) => line.startsWith('Budget,"bridge, RMS"'));
+  expect(row).toMatch(/,V,"of the source alone, referred to input",350 Ω at 25 °C\.$/);
+  expect(reportMarkdown(report)).toContain("- bridge: 350 Ω at 25 °C.\n");
+});
+
+test("a missed target names the bandwidth that would meet it; tones and correlation have lines of their own", () => {
+  const white = whiteFlicker({ floor: 10e-9, cornerHz: 0 });
+  const missed = noiseBudget({
+    sources: [
+      { source: white, name: "a" },
+      { source: whiteFlicker({ floor: 10e-9, cornerHz: 0 }), name: "b" },
+      { source: tone({ frequencyHz: 50, amplitude: 1e-8 }), name: "hum" },
+    ],
+    correlations: [{ between: ["a", "b"], coefficient: 0.5 }],
+    fromHz: 0,
+    toHz: 1e4,
+    measured: { unit: "°C", perUnit: 1e4 },
+    target: { rms: 1e-7 },
+  });
+  const { entries } = noiseReport({ title: "missed", budget: missed }).sections[0] ?? { entries: [] };
+  const value = (name: string): number => Number(entries.find((entry) => entry.name === name)?.value);
+  // 3·10⁻¹⁶·f + ½·10⁻¹⁶ = 10⁻¹⁴
+  expectRelative(value("bandwidth that meets it"), (1e-14 - 0.5e-16) / 3e-16, 1e-12);
+  expectRelative(value("added by correlation"), (100 * 1e-12) / (3e-12 + 0.5e-16), 1e-12);
+  expectRelative(value("peak-to-peak, measured"), 1e4 * missed.peakToPeak.total, 1e-14);
+  expect(entries.find(({ name }) => name === "peak-to-peak of all")?.basis).toMatch(/tones in amplitude, 20\.00 nV$/);
 });
 
 test("it is the same after a round trip through JSON, and ends with the cautions that every report carries", () => {
