@@ -1,11 +1,9 @@
-import { readCurve } from "@quietband/core";
 import { noiseBudget } from "../chain/noise-budget.js";
-import { readChain } from "../chain/read-chain.js";
 import { shareBars } from "../show/share-bars.js";
 import { textTable } from "../show/text-table.js";
+import { readChainInput } from "./chain-input.js";
 import type { Command } from "./command.js";
 import { inColumns, short } from "./noise-figures.js";
-import { UsageError } from "./usage-error.js";
 
 /** All sources of a channel together: the total, who makes it, and what halving one would buy. */
 export const budgetCommand: Command = {
@@ -21,15 +19,7 @@ export const budgetCommand: Command = {
     answers: "Which part of the invented strain channel decides its noise, and what a better one would buy.",
   },
   run(parsed, streams) {
-    const [path, ...more] = parsed.files;
-    if (path === undefined || more.length > 0)
-      throw new UsageError(
-        `quietband budget takes one chain file, or - for standard input; got ${parsed.files.length}.`,
-      );
-    const folder = path === "-" ? "" : path.replace(/[^\\/]*$/, "");
-    const { title, budget } = readChain(path === "-" ? streams.readInput() : streams.readFile(path), {
-      loadCurve: (file) => readCurve(streams.readFile(`${folder}${file}`)),
-    });
+    const { title, budget } = readChainInput("budget", parsed, streams);
     const result = noiseBudget(budget);
     const output = parsed.one("output");
     const rows = result.shares.map(({ name, share, rms }) => ({ label: name, share, text: short(rms, result.unit) }));

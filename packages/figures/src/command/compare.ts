@@ -18,7 +18,7 @@ import type { Command } from "./command.js";
 import type { ParsedOptions } from "./command-options.js";
 import { beyondOptions, fileTitle, readBeyond } from "./curve-input.js";
 import { short } from "./noise-figures.js";
-import type { Streams } from "./streams.js";
+import type { Progress, Streams } from "./streams.js";
 import { readThrough } from "./through.js";
 import { quantityOption } from "./typed-values.js";
 import { UsageError } from "./usage-error.js";
@@ -120,14 +120,7 @@ function readCandidates(
 ): { readonly candidates: readonly (Candidate & { readonly name: string })[]; readonly curves: readonly NamedCurve[] } {
   const read = (path: string): Curve => readCurve(path === "-" ? streams.readInput() : streams.readFile(path));
   const beyond = readBeyond(parsed);
-  const progress = streams.progress("reading", parsed.files.length);
-  const files = parsed.files.map((path) => {
-    const curve = read(path);
-    progress.step();
-    return { path, curve };
-  });
-  progress.end();
-  const curves = named(files);
+  const curves = named(readAll(parsed.files, read, streams.progress("reading", parsed.files.length)));
   const names = curves.map(({ name }) => name);
   const gains = byName(parsed, "gain", names);
   const currents = byName(parsed, "current", names);
@@ -142,6 +135,23 @@ function readCandidates(
     };
   });
   return { candidates, curves };
+}
+
+/** Every file in its turn; a display of progress is taken away also where one cannot be read. */
+function readAll(
+  paths: readonly string[],
+  read: (path: string) => Curve,
+  progress: Progress,
+): readonly { readonly path: string; readonly curve: Curve }[] {
+  try {
+    return paths.map((path) => {
+      const curve = read(path);
+      progress.step();
+      return { path, curve };
+    });
+  } finally {
+    progress.end();
+  }
 }
 
 /** By label or file; where two would be called the same, by the whole path. */

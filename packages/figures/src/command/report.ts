@@ -1,12 +1,11 @@
-import { readCurve } from "@quietband/core";
 import { noiseBudget } from "../chain/noise-budget.js";
-import { readChain } from "../chain/read-chain.js";
 import { noiseReport } from "../report/noise-report.js";
 import type { ReportPlot } from "../report/report.js";
 import { reportCsv } from "../report/report-csv.js";
 import { reportMarkdown } from "../report/report-markdown.js";
 import { reportText } from "../report/report-text.js";
 import { shareBars } from "../show/share-bars.js";
+import { readChainInput } from "./chain-input.js";
 import type { Command } from "./command.js";
 import { short } from "./noise-figures.js";
 import { UsageError } from "./usage-error.js";
@@ -26,21 +25,13 @@ export const reportCommand: Command = {
     answers: "The budget of the invented strain channel with its ranking, assumptions and cautions, as one document.",
   },
   run(parsed, streams) {
-    const [path, ...more] = parsed.files;
-    if (path === undefined || more.length > 0)
-      throw new UsageError(
-        `quietband report takes one chain file, or - for standard input; got ${parsed.files.length}.`,
-      );
     const form = parsed.one("as") ?? "text";
     const writer = writers[form];
     if (writer === undefined)
       throw new UsageError(
         `quietband report writes ${Object.keys(writers).join(", ")}; got --as ${form.slice(0, 40)}.`,
       );
-    const folder = path === "-" ? "" : path.replace(/[^\\/]*$/, "");
-    const { title, budget: chain } = readChain(path === "-" ? streams.readInput() : streams.readFile(path), {
-      loadCurve: (file) => readCurve(streams.readFile(`${folder}${file}`)),
-    });
+    const { title, budget: chain } = readChainInput("report", parsed, streams);
     const budget = noiseBudget(chain);
     const rows = budget.shares.map(({ name, share, rms }) => ({ label: name, share, text: short(rms, budget.unit) }));
     const plot: ReportPlot = { title: `${title}: who makes the noise`, svg: shareBars({ rows, title }) };

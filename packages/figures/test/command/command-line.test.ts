@@ -16,9 +16,10 @@ const demo = (name: string): string =>
 function run(
   words: readonly string[],
   input = "",
-): { status: number; out: string; complaint: string; written: Map<string, string> } {
+): { status: number; out: string; complaint: string; written: Map<string, string>; progress: string[] } {
   const said = { out: "", complaint: "" };
   const written = new Map<string, string>();
+  const progress: string[] = [];
   const status = runCommandLine(words, commands, {
     readInput: () => input,
     readFile: demo,
@@ -26,12 +27,15 @@ function run(
     print: (text) => {
       said.out += text;
     },
-    progress: () => ({ step: () => {}, end: () => {} }),
+    progress: (what, total) => {
+      progress.push(`${what} ${total}`);
+      return { step: () => progress.push("step"), end: () => progress.push("end") };
+    },
     complain: (text) => {
       said.complaint += text;
     },
   });
-  return { status, ...said, written };
+  return { status, ...said, written, progress };
 }
 
 describe("what it says when used wrongly: one line, status 2", () => {
@@ -257,4 +261,26 @@ describe("quietband report", () => {
     const { status, complaint } = run(["report", "strain-channel.json", "--as", "pdf"]);
     expect([status, complaint]).toEqual([2, "quietband report writes text, markdown, csv, json; got --as pdf.\n"]);
   });
+});
+
+test.each([
+  [
+    ["report", "strain-channel.json"],
+    ["reading curves 3", "step", "step", "step", "end"],
+  ],
+  [
+    ["budget", "strain-channel.json"],
+    ["reading curves 3", "step", "step", "step", "end"],
+  ],
+  [
+    ["compare", "A1.csv", "R1.csv", "--band", "1Hz:2Hz"],
+    ["reading 2", "step", "step", "end"],
+  ],
+])("%o says how far reading has come", (words, expected) => {
+  expect(run(words).progress).toEqual(expected);
+});
+
+test("a file that cannot be read takes the display of progress away too", () => {
+  const { status, progress } = run(["compare", "A1.csv", "strain-channel.json", "--band", "1Hz:2Hz"]);
+  expect([status, ...progress]).toEqual([1, "reading 2", "step", "end"]);
 });
