@@ -67,8 +67,8 @@ const mostKnots = 1000;
  *
  * Up-crossings of a level come as a Poisson process at Rice's rate; where samples are few the chance that a sample crosses
  * is taken exactly, and crossings that come in clumps count once. Noise slower than the record moves through it as a path
- * and is averaged over. White samples have the exact range of independent normals. Against simulation of some 60 spectra,
- * bands and records the mean is within 2 % and the spread within 8 % (docs/method.md); a call takes some 15 ms.
+ * and is averaged over. White samples have the exact range of independent normals. Against simulation of some 50 spectra,
+ * bands and records the mean is within 2.5 % and the spread within 7 % (docs/method.md); a call takes 15 to 100 ms.
  *
  * @param spectrum - one-sided power density, unit²/Hz, of Gaussian, stationary noise.
  * @param options - `fromHz`, `toHz`, `weighting`, `recordSeconds`, `sampleRateHz`, `records`, `coupling`.
@@ -183,6 +183,7 @@ function meanRemoved(turns: number): number {
 const routes: Readonly<Record<RecordRange["route"], string>> = Object.freeze({
   "independent samples": "exact range of independent samples",
   "few samples": "range of correlated samples, drawn",
+  "narrow band": "envelopes of a narrow band, drawn",
   "up-crossings": "up-crossings of Gaussian noise",
 });
 

@@ -19,8 +19,8 @@ export function extremesCovariance({ table, start, anticorrelation }: CrossingHa
   const spread = Math.sqrt(1 - q * q);
   const levels = Array.from({ length: count }, (_, index) => from + index * step);
   const hazards = levels.map((level) => table[Math.round((level - lowestLevel) / levelStep)] as number);
-  const chances = levels.map((level, index) =>
-    Math.exp(-(hazards[index] as number) - (start[Math.round((level - lowestLevel) / levelStep)] as number)),
+  const logChances = levels.map(
+    (level, index) => -(hazards[index] as number) - (start[Math.round((level - lowestLevel) / levelStep)] as number),
   );
   let sum = 0;
   for (let high = 0; high < count; high += 1)
@@ -29,7 +29,9 @@ export function extremesCovariance({ table, start, anticorrelation }: CrossingHa
       const peak = upper + 1 / Math.max(upper, 1);
       const follows = Math.max(0, normalTail((lower - q * peak) / spread) - normalTail(lower));
       const shared = (hazards[high] as number) * (1 - (1 - follows) ** 2);
-      const joint = Math.expm1(shared) * (chances[high] as number) * (chances[low] as number);
+      // in logarithms: a long record has hazards of thousands at low levels
+      const product = (logChances[high] as number) + (logChances[low] as number);
+      const joint = Math.exp(product + shared) - Math.exp(product);
       sum += high === low ? joint : 2 * joint;
     }
   return sum * step * step;

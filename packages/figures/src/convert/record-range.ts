@@ -1,6 +1,7 @@
 import { crossingHazard } from "./crossing-hazard.js";
 import { extremesCovariance } from "./extremes-covariance.js";
 import { largestOf, type WeightedValues } from "./largest-of.js";
+import { narrowBandRanges } from "./narrow-band-range.js";
 import { rangeMixture } from "./range-mixture.js";
 import { rangeOfNormals } from "./range-of-normals.js";
 import type { RecordDensity } from "./record-density.js";
@@ -8,7 +9,7 @@ import { type SlowPaths, slowPaths } from "./slow-paths.js";
 import { recordPower, structureFunction } from "./structure-function.js";
 
 /** How the range was found: exactly, from drawn samples, or from up-crossings. */
-export type RecordRangeRoute = "independent samples" | "few samples" | "up-crossings";
+export type RecordRangeRoute = "independent samples" | "few samples" | "narrow band" | "up-crossings";
 
 /** Mean and standard deviation of the range of a record, or of the largest of several, in the signal's unit. */
 export interface RecordRange {
@@ -47,10 +48,22 @@ export function recordRange(record: RecordDensity, options: RecordRangeOptions):
   const lags = lagsOf(samples);
   const structure = structureFunction(record, secondsOf(lags, sampleSeconds));
   const independent = structure.every((value) => Math.abs(value - power) <= negligibleCorrelation * power);
-  const found = samples <= fewSamples ? drawn(record, options) : crossed(record, lags, options);
+  const found = samples <= fewSamples ? drawn(record, options) : narrowOrCrossed(record, structure, lags, options);
   const one = independent ? independentRange(samples, power) : found;
   const largest = largestOf(found.distribution, records, one);
   return { ...largest, route: independent ? "independent samples" : found.route };
+}
+
+function narrowOrCrossed(
+  record: RecordDensity,
+  structure: Float64Array,
+  lags: readonly number[],
+  options: RecordRangeOptions,
+): Found {
+  const most = structure.reduce((largest, gap) => Math.max(largest, gap), 0);
+  const anticorrelation = most / recordPower(record) - 1;
+  const ranges = narrowBandRanges(record, (options.samples - 1) * options.sampleSeconds, anticorrelation);
+  return ranges === undefined ? crossed(record, lags, options) : foundFrom(ranges, "narrow band");
 }
 
 interface Found {
@@ -68,16 +81,15 @@ function independentRange(samples: number, power: number): { mean: number; stand
 function drawn(record: RecordDensity, { samples, sampleSeconds }: RecordRangeOptions): Found {
   const lags = Array.from({ length: samples }, (_, lag) => lag);
   const { paths } = slowPaths(structureFunction(record, secondsOf(lags, sampleSeconds)), 8 * pathCount);
-  const ranges = Float64Array.from(paths, (path) => Math.max(...path) - Math.min(...path)).toSorted();
+  return foundFrom(Float64Array.from(paths, (path) => Math.max(...path) - Math.min(...path)).toSorted(), "few samples");
+}
+
+/** Moments of ranges that were drawn. */
+function foundFrom(ranges: Float64Array, route: RecordRangeRoute): Found {
   const mean = ranges.reduce((sum, range) => sum + range, 0) / ranges.length;
   const variance = ranges.reduce((sum, range) => sum + (range - mean) ** 2, 0) / ranges.length;
   const chances = ranges.map(() => 1 / ranges.length);
-  return {
-    mean,
-    standardDeviation: Math.sqrt(variance),
-    route: "few samples",
-    distribution: { values: ranges, chances },
-  };
+  return { mean, standardDeviation: Math.sqrt(variance), route, distribution: { values: ranges, chances } };
 }
 
 function crossed(

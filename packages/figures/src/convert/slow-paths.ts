@@ -1,4 +1,6 @@
-import { upperNormalQuantile } from "./normal-quantile.js";
+import { choleskyFactor } from "./cholesky-factor.js";
+import { normalScore } from "./normal-quantile.js";
+import { randomNumbers } from "./random-numbers.js";
 
 /** Paths that slow noise takes through a record, each at equally spaced points from its begin to its end. */
 export interface SlowPaths {
@@ -79,32 +81,6 @@ function modeCovariance(structure: Float64Array, modes: readonly Float64Array[])
   );
 }
 
-/** Lower factor; modes without power of their own beyond rounding get a zero column. */
-function choleskyFactor(covariance: readonly Float64Array[]): Float64Array[] {
-  const size = covariance.length;
-  const factor = covariance.map(() => new Float64Array(size));
-  const least = 1e-7 * covariance.reduce((sum, row, index) => sum + (row[index] as number), 0);
-  for (let column = 0; column < size; column += 1) {
-    const own = factor[column] as Float64Array;
-    let pivot = covariance[column]?.[column] as number;
-    for (let k = 0; k < column; k += 1) pivot -= (own[k] as number) ** 2;
-    if (pivot <= least) continue;
-    own[column] = Math.sqrt(pivot);
-    for (let row = column + 1; row < size; row += 1) {
-      const other = factor[row] as Float64Array;
-      let sum = covariance[row]?.[column] as number;
-      for (let k = 0; k < column; k += 1) sum -= (own[k] as number) * (other[k] as number);
-      other[column] = sum / (own[column] as number);
-    }
-  }
-  return factor;
-}
-
-/** Normal value that a share of all values lies below. */
-function normalScore(share: number): number {
-  return share > 0.5 ? upperNormalQuantile(1 - share) : -upperNormalQuantile(share);
-}
-
 /** A permutation of 0 .. count − 1 (Fisher and Yates). */
 function shuffled(count: number, random: () => number): Int32Array {
   const order = Int32Array.from({ length: count }, (_, index) => index);
@@ -115,15 +91,4 @@ function shuffled(count: number, random: () => number): Int32Array {
     order[other] = kept;
   }
   return order;
-}
-
-/** Uniform on [0, 1), 32 bits, by a Weyl sequence and two multiplications; enough for shuffling. */
-function randomNumbers(start: number): () => number {
-  let state = start;
-  return () => {
-    state = (state + 0x9e3779b9) | 0;
-    let mixed = Math.imul(state ^ (state >>> 16), 0x21f0aaad);
-    mixed = Math.imul(mixed ^ (mixed >>> 15), 0x735a2d97);
-    return ((mixed ^ (mixed >>> 15)) >>> 0) / 4294967296;
-  };
 }

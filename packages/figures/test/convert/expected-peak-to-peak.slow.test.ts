@@ -112,6 +112,31 @@ const cases: readonly Case[] = [
     simulatedHz: 32,
   },
   {
+    name: "very narrow band, 0.99 Hz to 1.01 Hz, 100 s",
+    spectrum: white,
+    options: { fromHz: 0.99, toHz: 1.01, recordSeconds: 100 },
+    simulatedHz: 20,
+    size: [18, 24],
+  },
+  {
+    name: "narrow band in ten turns, 0.9 Hz to 1.1 Hz, 10 s",
+    spectrum: white,
+    options: { fromHz: 0.9, toHz: 1.1, recordSeconds: 10 },
+    simulatedHz: 32,
+  },
+  {
+    name: "a resonance of Q 100 at 10 Hz, 10 s",
+    spectrum: white,
+    options: {
+      fromHz: 0.1,
+      toHz: 100,
+      weighting: resonator({ centreHz: 10, q: 100 }),
+      recordSeconds: 10,
+      sampleRateHz: 400,
+    },
+    size: [19, 24],
+  },
+  {
     name: "a resonance of Q 20 at 5 Hz, 20 s",
     spectrum: white,
     options: {

@@ -37,6 +37,17 @@ test("scaling the noise scales the range; a faster clock and a slower noise in s
   expectRelative(slowed.multipleOfRms, one.multipleOfRms, 1e-6);
 });
 
+test("records of any length have a mean that grows and a spread that shrinks, slowly", () => {
+  const found = [1, 3, 10, 100, 1e4, 1e6].map((recordSeconds) =>
+    expectedPeakToPeak(white, { fromHz: 1, toHz: 1e3, recordSeconds, records: 3 }),
+  );
+  for (const [index, { mean, spread }] of found.entries()) {
+    expect(mean).toBeGreaterThan(found[index - 1]?.mean ?? 0);
+    expect(spread).toBeLessThan(found[index - 1]?.spread ?? Number.POSITIVE_INFINITY);
+    expect(spread).toBeGreaterThan(0.01 * mean);
+  }
+});
+
 test("the same call gives the same digits", () => {
   expect(expectedPeakToPeak(white, record)).toEqual(expectedPeakToPeak(white, record));
 });
