@@ -1,3 +1,4 @@
+import { deepFrozen } from "../file/deep-frozen.js";
 import { type JsonSchema, kind, record, text } from "../file/json-schema.js";
 import { noiseSchema, sourceSchema } from "./chain-sources.js";
 import { filterKinds } from "./filter-kinds.js";
@@ -78,11 +79,3 @@ export const chainSchema: Readonly<Record<string, unknown>> = deepFrozen({
     stage: record("A stage of the path.", { name: text("Names differ.") }, { gain: to("gain"), filter: to("filter") }),
   },
 });
-
-function deepFrozen<Value>(value: Value): Value {
-  if (typeof value === "object" && value !== null) {
-    for (const inner of Object.values(value)) deepFrozen(inner);
-    Object.freeze(value);
-  }
-  return value;
-}

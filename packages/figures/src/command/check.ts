@@ -1,6 +1,6 @@
 import { MalformedDataError, NoiseError, writeQuantity } from "@quietband/core";
 import type { BasisVerdict } from "../judge/basis-verdict.js";
-import type { FigureBasis } from "../judge/check-options.js";
+import type { CheckOptions, FigureBasis } from "../judge/check-options.js";
 import { checkStatedFigure, type StatedFigureCheck } from "../judge/check-stated-figure.js";
 import type { Reconciler } from "../judge/reconcile.js";
 import type { Command } from "./command.js";
@@ -33,7 +33,7 @@ export const checkCommand: Command = {
     {
       name: "through",
       value: "FILTER",
-      help: "the filter the figure was measured through, where it is known; may be repeated",
+      help: "the filter the figure was measured through, where it is known, or brick wall; may be repeated",
       repeats: true,
     },
     ...beyondOptions,
@@ -55,11 +55,11 @@ export const checkCommand: Command = {
       );
     const options = {
       beyond: readBeyond(parsed),
-      basis: parsed.one("basis") as FigureBasis | undefined,
+      basis: readBasis(parsed.one("basis")),
       factor: plainNumber(parsed, "factor"),
       recordSeconds: quantityOption(parsed, "record", "s"),
       records: plainNumber(parsed, "records"),
-      weighting: readThrough(parsed.all("through")),
+      weighting: readFilter(parsed.all("through")),
       relativeTo: quantityOption(parsed, "of", curve.unit),
     };
     const progress = streams.progress("checking", stated.length);
@@ -89,6 +89,15 @@ export const checkCommand: Command = {
     streams.print([name, ...provenanceLines(curve), "", ...lines].join("\n"));
   },
 };
+
+function readBasis(word: string | undefined): FigureBasis | undefined {
+  if (word === undefined || word === "convention" || word === "record") return word;
+  throw new MalformedDataError(`Expected convention or record for --basis; got "${word.slice(0, 40)}".`);
+}
+
+function readFilter(words: readonly string[]): CheckOptions["weighting"] {
+  return words.length === 1 && words[0] === "brick wall" ? "brick wall" : readThrough(words);
+}
 
 const percent = (share: number): string => `${(100 * share).toFixed(1)} %`;
 

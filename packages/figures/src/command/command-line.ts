@@ -33,7 +33,7 @@ export function runCommandLine(words: readonly string[], commands: readonly Comm
       return exitStatus.usage;
     }
     if (error instanceof NoiseError || isFileError(error)) {
-      streams.complain(`${asTyped(error.message)}\n`);
+      streams.complain(`${error instanceof NoiseError ? asTyped(error.message) : fileSentence(error)}\n`);
       return exitStatus.badInput;
     }
     throw error;
@@ -45,8 +45,15 @@ function asTyped(message: string): string {
   return message.replace(/beyond: \{ (below|above): (\d) \}/g, "--$1 $2");
 }
 
-function isFileError(error: unknown): error is Error {
+function isFileError(error: unknown): error is NodeJS.ErrnoException {
   return error instanceof Error && "syscall" in error;
+}
+
+/** What went wrong with a file, in a sentence. */
+function fileSentence({ code, path = "it", message }: NodeJS.ErrnoException): string {
+  if (code === "ENOENT") return `Expected a file at ${path}; there is none.`;
+  if (code === "EISDIR") return `Expected a file at ${path}; it is a folder.`;
+  return code === "EACCES" ? `The file at ${path} may not be opened; check its permissions.` : message;
 }
 
 function unknownCommand(name: string, commands: readonly Command[]): string {

@@ -24,6 +24,7 @@ export interface CheckOptions {
   readonly relativeTo?: number | undefined;
 }
 
+/** What a peak-to-peak figure is: a factor times the RMS, or what a record showed. */
 export type FigureBasis = "convention" | "record";
 
 const optionNames: readonly (keyof CheckOptions)[] = [

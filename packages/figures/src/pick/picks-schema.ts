@@ -1,3 +1,4 @@
+import { deepFrozen } from "../file/deep-frozen.js";
 import { type JsonSchema, record, text } from "../file/json-schema.js";
 
 const pixels = (description: string): JsonSchema => ({ description, type: "number" });
@@ -87,11 +88,3 @@ export const picksSchema: Readonly<Record<string, unknown>> = deepFrozen({
   title: "Plot read by pixel",
   ...whole,
 });
-
-function deepFrozen<Value>(value: Value): Value {
-  if (typeof value === "object" && value !== null) {
-    for (const inner of Object.values(value)) deepFrozen(inner);
-    Object.freeze(value);
-  }
-  return value;
-}

@@ -35,11 +35,16 @@ const gap = 6;
 const lineStep = textSize.label * lineHeight;
 const entryGap = 4;
 
+/** So many labels may come with a last one that counts the rest. */
+const manyLabels = 8;
+
 /** Pixels the key takes right of the plot: what the longest label needs, but no more than a third of the picture. */
 export function keyGutter(labels: readonly string[], width: number): number {
   if (labels.length === 0) return 12;
   const most = Math.min(280, width / 3) - swatchWidth - gap - margin;
-  const longest = Math.max(...labels.map((label) => textWidth(label, textSize.label)));
+  // of many series some may only be counted
+  const counted = labels.length < manyLabels ? [] : ["and 100 more"];
+  const longest = Math.max(...[...labels, ...counted].map((label) => textWidth(label, textSize.label)));
   return margin + swatchWidth + gap + Math.min(most, longest + 1);
 }
 

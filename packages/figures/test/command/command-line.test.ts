@@ -3,6 +3,12 @@ import { describe, expect, test } from "vitest";
 import { runCommandLine } from "../../src/command/command-line.js";
 import { commands } from "../../src/command/commands.js";
 
+/** As the command line gets it from the system. */
+test("a file that is not there is named in a sentence", () => {
+  const { status, complaint } = run(["noise", "R9.csv", "--band", "1Hz:2Hz"]);
+  expect([status, complaint.replace(/at .*R9/, "at R9")]).toEqual([1, "Expected a file at R9.csv; there is none.\n"]);
+});
+
 const demo = (name: string): string =>
   readFileSync(new URL(`../../../../fixtures/demo/${name}`, import.meta.url), "utf8");
 
@@ -116,6 +122,15 @@ test("check compares every figure that a curve states", () => {
   expect(out.match(/^Stated: /gm)).toHaveLength(2);
   expect(out).toMatch(/Verdict: agrees with the range of one record of 10 s, .*; lower than 6\.6 × RMS, .*, by 13 %\./);
   expect(out).toMatch(/would agree with a peak-to-peak factor of 5\.7\d in place of 6\.6, /);
+});
+
+test("check takes the measurement as it is known", () => {
+  const { out } = run(["check", "R1.csv", "--basis", "convention", "--through", "brick wall", "--factor", "5.77"]);
+  expect(out).toMatch(/Verdict: agrees with 5\.77 × RMS/);
+  expect(out).not.toMatch(/usual filter|As a record/);
+  expect(run(["check", "R1.csv", "--basis", "guess"]).complaint).toBe(
+    'Expected convention or record for --basis; got "guess".\n',
+  );
 });
 
 test("check goes on where one of several figures lies beyond the points, and says so", () => {

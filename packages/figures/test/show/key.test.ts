@@ -62,4 +62,11 @@ test("wraps long labels while there is room and shortens them where there is non
 test("takes no more than a third of the picture, and next to nothing without entries", () => {
   expect(keyGutter(["x".repeat(500)], 760)).toBeLessThanOrEqual(760 / 3);
   expect(keyGutter([], 760)).toBeLessThan(20);
+  // many short names leave room for the line that counts the rest
+  expect(
+    keyGutter(
+      Array.from({ length: 12 }, (_, k) => `R${k}`),
+      760,
+    ),
+  ).toBe(keyGutter(["and 100 more"], 760));
 });
