@@ -88,22 +88,31 @@ export function bandNoise(spectrum: Spectrum, options: BandNoiseOptions): BandNo
   const found = requireReached(bandPower(spectrum, weighting, band, tolerance), spectrum.unit);
   const parts = uncertaintyParts(spectrum, weighting, band, found.power);
   const outsidePoints = shareOutsidePoints(spectrum, weighting, band, found.power);
-  const noise: BandNoise = {
-    rms: Math.sqrt(found.power),
-    power: found.power,
-    unit: spectrum.unit,
+  const power = found.power;
+  const numericalError = relativeErrorOfRms(found);
+  const notes = notesFor(spectrum, outsidePoints);
+  const { unit } = spectrum;
+  const { status, evaluations } = found;
+  const rms = Math.sqrt(power);
+  // Two records written out: spreading one into another costs more than an exact integral.
+  if (parts.length === 0)
+    return Object.freeze({ rms, power, unit, fromHz, toHz, numericalError, outsidePoints, status, evaluations, notes });
+  let variance = 0;
+  for (const { relative } of parts) variance += relative * relative;
+  return Object.freeze({
+    rms,
+    power,
+    unit,
     fromHz,
     toHz,
-    numericalError: relativeErrorOfRms(found),
+    numericalError,
+    standardUncertainty: Math.sqrt(variance),
+    uncertaintyParts: parts,
     outsidePoints,
-    status: found.status,
-    evaluations: found.evaluations,
-    notes: notesFor(spectrum, outsidePoints),
-  };
-  // A record spread into another costs more than an exact integral; only what has an uncertainty pays for it.
-  if (parts.length === 0) return Object.freeze(noise);
-  const standardUncertainty = Math.hypot(...parts.map((part) => part.relative));
-  return Object.freeze({ ...noise, standardUncertainty, uncertaintyParts: parts });
+    status,
+    evaluations,
+    notes,
+  });
 }
 
 /** What the spectrum assumes on a side counts only where the band reaches there. */

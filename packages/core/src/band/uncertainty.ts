@@ -3,6 +3,7 @@ import { shortPanelRule } from "../numerics/short-panel-rule.js";
 import type { Sensitivity, Spectrum } from "../spectrum/spectrum.js";
 import type { Weighting } from "../weighting/weighting.js";
 import { productOf } from "./adaptive-route.js";
+import { edgeShares, type PowerShares } from "./edge-shares.js";
 
 /** One source of standard uncertainty of a band's rms; relative, k = 1. */
 export interface UncertaintyPart {
@@ -14,7 +15,8 @@ export interface UncertaintyPart {
  * Relative standard uncertainty of the rms from each group of parameters (JCGM 100, 5.2.2: u² = Σ Σ c_i c_j u_ij), with
  * c_k = d ln rms / d p_k = ½ ∫ S·|H|² · (d ln S/d p_k) df / ∫ S·|H|² df.
  *
- * The integrals share one rule, good for S·|H|² to 1e-6: an uncertainty needs no more digits.
+ * Straight lines through points in a brick wall have closed forms. Else the integrals share one rule, good for S·|H|² to
+ * 1e-6, since an uncertainty needs no more digits: a short fixed one where it meets the known power, an adapted one elsewhere.
  *
  * @param knownPower - ∫ S·|H|² df by the best route, against which the rule is checked.
  */
@@ -45,9 +47,10 @@ export function groupResponses(
   const responses = groups.map((group) => new Float64Array(group.count));
   if (knownPower === 0) return responses;
   const edges = edgesBetween(spectrum, groups, weighting, band);
-  let { nodes, shares, total } = measured(shortPanelRule(edges), spectrum, weighting);
-  if (!(Math.abs(total / knownPower - 1) <= goodEnough))
-    ({ nodes, shares, total } = measured(adapted(edges, spectrum, weighting), spectrum, weighting));
+  const straight = groups.every((group) => group.straight === true);
+  const { nodes, shares, total } =
+    (straight ? edgeShares(spectrum, weighting, edges) : undefined) ??
+    sharesByRule(spectrum, weighting, edges, knownPower);
   for (const [index, group] of groups.entries()) {
     const response = responses[index] as Float64Array;
     let share = 0;
@@ -65,18 +68,22 @@ export function groupResponses(
 /** Relative error of the power up to which a rule will do for an uncertainty. */
 const goodEnough = 1e-6;
 
-interface MeasuredRule {
-  readonly nodes: Float64Array;
-  /** What each node adds to the power. */
-  readonly shares: Float64Array;
-  readonly total: number;
+function sharesByRule(
+  spectrum: Spectrum,
+  weighting: Weighting | undefined,
+  edges: readonly number[],
+  knownPower: number,
+): PowerShares {
+  const short = measured(shortPanelRule(edges), spectrum, weighting);
+  if (Math.abs(short.total / knownPower - 1) <= goodEnough) return short;
+  return measured(adapted(edges, spectrum, weighting), spectrum, weighting);
 }
 
 function measured(
   { nodes, weights }: QuadratureRule,
   spectrum: Spectrum,
   weighting: Weighting | undefined,
-): MeasuredRule {
+): PowerShares {
   const shares = new Float64Array(nodes.length);
   productOf(spectrum, weighting)(nodes, shares);
   let total = 0;
@@ -111,14 +118,16 @@ function edgesBetween(
   weighting: Weighting | undefined,
   [fromHz, toHz]: readonly [number, number],
 ): readonly number[] {
-  const inside = new Set<number>();
-  for (const { knots } of [spectrum, ...(weighting === undefined ? [] : [weighting]), ...groups])
-    for (const hz of knots) if (hz > fromHz && hz < toHz) inside.add(hz);
-  const knots = Float64Array.from(inside).toSorted();
-  const outermost = [knots[0], knots.at(-1), fromHz, toHz].filter(
+  const lists = [spectrum.knots, weighting?.knots ?? [], ...groups.map(({ knots }) => knots)];
+  const inside: number[] = [];
+  for (const knots of lists) for (const hz of knots) if (hz > fromHz && hz < toHz) inside.push(hz);
+  // lists that ascend are merged, not sorted
+  const ascending = inside.toSorted((one, other) => one - other);
+  const outermost = [ascending[0], ascending.at(-1), fromHz, toHz].filter(
     (hz): hz is number => hz !== undefined && hz > 0 && hz < Number.POSITIVE_INFINITY,
   );
-  const low = fromHz === 0 ? Math.min(...outermost) * 1e-8 : fromHz;
-  const high = toHz === Number.POSITIVE_INFINITY ? Math.max(...outermost) * 1e8 : toHz;
-  return [low, ...knots, high];
+  const edges = [fromHz === 0 ? Math.min(...outermost) * 1e-8 : fromHz];
+  for (const hz of ascending) if (hz > (edges.at(-1) as number)) edges.push(hz);
+  edges.push(toHz === Number.POSITIVE_INFINITY ? Math.max(...outermost) * 1e8 : toHz);
+  return edges;
 }

@@ -14,6 +14,7 @@ export function pointSensitivities({ points, commonUncertainty, commonEffects = 
     count: points.length,
     covariance: Object.freeze({ variances: Object.freeze(points.map(({ uncertainty }) => uncertainty * uncertainty)) }),
     knots: hz,
+    straight: true,
     gradientAt(at: number, visit: (parameter: number, slope: number) => void): void {
       hats(at, (index, share) => visit(index, 2 * share));
     },
@@ -29,6 +30,7 @@ export function commonSensitivity(name: string, relativeUncertainty: number): Se
     count: 1,
     covariance: Object.freeze({ variances: Object.freeze([relativeUncertainty * relativeUncertainty]) }),
     knots: Object.freeze([]),
+    straight: true,
     gradientAt: (_: number, visit: (parameter: number, slope: number) => void) => visit(0, 2),
   });
 }
@@ -40,6 +42,7 @@ export function exponentSensitivity(side: "below" | "above", edgeHz: number, sta
     count: 1,
     covariance: Object.freeze({ variances: Object.freeze([standardUncertainty * standardUncertainty]) }),
     knots: Object.freeze([edgeHz]),
+    straight: true,
     gradientAt(hz: number, visit: (parameter: number, slope: number) => void): void {
       if (side === "below" ? hz < edgeHz : hz > edgeHz) visit(0, -Math.log(hz / edgeHz));
     },
@@ -75,6 +78,7 @@ function effectSensitivity({ name, effects }: CommonEffect, hz: readonly number[
     count: 1,
     covariance: Object.freeze({ variances: Object.freeze([1]) }),
     knots: hz,
+    straight: true,
     gradientAt(at: number, visit: (parameter: number, slope: number) => void): void {
       let slope = 0;
       hats(at, (index, share) => {

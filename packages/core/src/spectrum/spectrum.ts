@@ -45,6 +45,8 @@ export interface Sensitivity {
   readonly covariance: { readonly variances: readonly number[] } | { readonly matrix: readonly (readonly number[])[] };
   /** Hz, ascending: where the gradients bend. */
   readonly knots: readonly number[];
+  /** Whether all gradients are unbroken straight lines in ln f between the knots: then they need to be known at these only. */
+  readonly straight?: boolean;
   /** Calls `visit` with d ln S / d parameter at a frequency, for every parameter for which it is not zero. */
   gradientAt(hz: number, visit: (parameter: number, slope: number) => void): void;
 }

@@ -76,6 +76,7 @@ function sharesOf(part: Spectrum, spectra: readonly Spectrum[]): Sensitivity[] {
   return (part.sensitivities ?? []).map((sensitivity) =>
     Object.freeze({
       ...sensitivity,
+      straight: false,
       gradientAt(hz: number, visit: (parameter: number, slope: number) => void): void {
         const share = part.powerDensityAt(hz) / totalAt(spectra, hz);
         sensitivity.gradientAt(hz, (parameter, slope) => visit(parameter, slope * share));

@@ -74,6 +74,7 @@ function knotsAround(toneHz: number, leaveOutHz: number, knots: readonly number[
 function aroundTone(group: Sensitivity, spectrum: Spectrum, toneHz: number): Sensitivity {
   return Object.freeze({
     ...group,
+    straight: false,
     knots: Object.freeze(knotsAround(toneHz, 0, group.knots)),
     gradientAt(hz: number, visit: (parameter: number, slope: number) => void): void {
       const offset = Math.abs(hz - toneHz);

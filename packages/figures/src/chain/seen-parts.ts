@@ -139,6 +139,7 @@ function sharedGroup(group: Sensitivity, index: number, spectra: readonly Spectr
   const own = spectra.map((spectrum) => spectrum.sensitivities?.[index]);
   return Object.freeze({
     ...group,
+    straight: false,
     knots: Object.freeze([...new Set(own.flatMap((each) => [...(each?.knots ?? [])]))].toSorted((a, b) => a - b)),
     gradientAt(hz: number, visit: (parameter: number, slope: number) => void): void {
       const densities = spectra.map((spectrum) => spectrum.powerDensityAt(hz));
