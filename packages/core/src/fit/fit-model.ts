@@ -14,7 +14,7 @@ export interface FitModel {
   readonly exponent: ResolvedExponent;
   /** ln(S/e^scale) at ln f, and its slopes by the parameters. */
   shapeAt(x: number, parameters: ArrayLike<number>, slopes: Float64Array): number;
-  /** The same at every x, slopes row by row: the loop a fit spends its time in. */
+  /** The same at every x, slopes row by row. */
   shapeOver(x: Float64Array, parameters: ArrayLike<number>, shape: Float64Array, slopes: Float64Array): void;
 }
 
@@ -45,7 +45,6 @@ export function fitModel(name: FitModelName, exponent: ResolvedExponent): FitMod
   const exponentOf = (p: ArrayLike<number>): number =>
     exponentAt >= 0 ? (p[exponentAt] as number) : exponent.kind === "fixed" ? exponent.value : 1;
   const base = { name, parameters, exponentAt, exponent };
-  if (name === "floorAndFlicker") return { ...base, ...twoTerms(exponentAt, exponentOf) };
   const shapeAt = shapeOf(name, exponentAt, exponentOf, extra);
   return { ...base, shapeAt, shapeOver: pointByPoint(shapeAt, parameters.length) };
 }
@@ -54,6 +53,7 @@ type ExponentOf = (parameters: ArrayLike<number>) => number;
 
 function shapeOf(name: FitModelName, exponentAt: number, exponentOf: ExponentOf, extra: number): FitModel["shapeAt"] {
   if (name === "floor") return () => 0;
+  if (name === "floorAndFlicker") return twoTerms(exponentAt, exponentOf);
   if (name !== "flicker") return manyTerms([cornerTerm(exponentAt, exponentOf), ...extraTerms(name, extra)]);
   return (x, p, slopes) => {
     if (exponentAt >= 0) slopes[exponentAt] = -x;
@@ -71,32 +71,16 @@ function pointByPoint(shapeAt: FitModel["shapeAt"], size: number): FitModel["sha
   };
 }
 
-/** ln(1 + (f_c/f)^a): the model of nearly every fit, with a loop of its own. */
-function twoTerms(exponentAt: number, exponentOf: ExponentOf): Pick<FitModel, "shapeAt" | "shapeOver"> {
-  const size = exponentAt >= 0 ? 2 : 1;
-  return {
-    shapeAt(x, p, slopes) {
-      const steepness = exponentOf(p);
-      const distance = (p[0] as number) - x;
-      const smaller = Math.exp(-Math.abs(steepness * distance));
-      const share = (steepness * distance > 0 ? 1 : smaller) / (1 + smaller);
-      slopes[0] = steepness * share;
-      if (exponentAt >= 0) slopes[exponentAt] = distance * share;
-      return Math.max(steepness * distance, 0) + Math.log1p(smaller);
-    },
-    shapeOver(x, p, shape, slopes) {
-      const steepness = exponentOf(p);
-      const corner = p[0] as number;
-      for (let i = 0; i < x.length; i += 1) {
-        const distance = corner - (x[i] as number);
-        const z = steepness * distance;
-        const smaller = Math.exp(z > 0 ? -z : z);
-        const share = (z > 0 ? 1 : smaller) / (1 + smaller);
-        shape[i] = Math.max(z, 0) + Math.log1p(smaller);
-        slopes[size * i] = steepness * share;
-        if (size === 2) slopes[2 * i + 1] = distance * share;
-      }
-    },
+/** ln(1 + (f_c/f)^a), without overflow. */
+function twoTerms(exponentAt: number, exponentOf: ExponentOf): FitModel["shapeAt"] {
+  return (x, p, slopes) => {
+    const steepness = exponentOf(p);
+    const distance = (p[0] as number) - x;
+    const smaller = Math.exp(-Math.abs(steepness * distance));
+    const share = (steepness * distance > 0 ? 1 : smaller) / (1 + smaller);
+    slopes[0] = steepness * share;
+    if (exponentAt >= 0) slopes[exponentAt] = distance * share;
+    return Math.max(steepness * distance, 0) + Math.log1p(smaller);
   };
 }
 

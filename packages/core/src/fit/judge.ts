@@ -24,7 +24,7 @@ interface Judged {
   readonly points: FitPoints;
   readonly chosen: Tried;
   readonly alternatives: readonly FitAlternative[];
-  readonly residuals: Float64Array;
+  readonly residuals: readonly number[];
   readonly misreadings: readonly Misreading[];
   readonly downweighted: boolean;
 }

@@ -1,8 +1,8 @@
-import { arrayBlock } from "../numerics/array-block.js";
 import { dampedLeastSquares } from "../numerics/damped-least-squares.js";
 import type { FitModel } from "./fit-model.js";
 import type { FitPoints } from "./fit-points.js";
 import { firstStart, moreStarts } from "./start.js";
+import { type Found, twoTermDescent } from "./two-term-descent.js";
 
 /** A good start needs little damping; what the sum of squares no longer shows is no statistics either. */
 const solverOptions = Object.freeze({
@@ -31,7 +31,7 @@ export interface RefinedFit {
   /** Covariance of scale and parameters, from the Jacobian, not widened; undefined where the points do not fix them all. */
   readonly covariance: readonly (readonly number[])[] | undefined;
   /** ln of density over the model's, point by point. */
-  readonly residuals: Float64Array;
+  readonly residuals: readonly number[];
   readonly converged: boolean;
 }
 
@@ -57,10 +57,8 @@ export function refine(model: FitModel, points: FitPoints, { trust, from }: Refi
     trust === undefined ? points.weight : points.weight.map((value, i) => value * Math.sqrt(trust[i] as number));
   const given = { ...points, weight };
   if (model.parameters.length === 0) return assembled(model, given, nothingFound);
-  const projected = projection(model, given);
   const rows = points.x.length + priorRows(model);
-  const options = model.parameters.length > 2 ? threeTermOptions : solverOptions;
-  const search = (start: ArrayLike<number>): Found => dampedLeastSquares(projected, start, rows, options);
+  const search = searchOf(model, given, rows);
   let best = search(from ?? firstStart(model, points));
   if (!settled(model, given, best, rows))
     for (const start of moreStarts(model, points)) {
@@ -68,6 +66,14 @@ export function refine(model: FitModel, points: FitPoints, { trust, from }: Refi
       if (!(found.sumOfSquares >= best.sumOfSquares)) best = found;
     }
   return assembled(model, given, best);
+}
+
+/** The search of a model from a start: its own for two terms, the general one else. */
+function searchOf(model: FitModel, points: FitPoints, rows: number): (start: ArrayLike<number>) => Found {
+  if (model.name === "floorAndFlicker") return (start) => twoTermDescent(model, points, start);
+  const projected = projection(model, points);
+  const options = model.parameters.length > 2 ? threeTermOptions : solverOptions;
+  return (start) => dampedLeastSquares(projected, start, rows, options);
 }
 
 /** Whether one search is enough: two terms at most, a corner among the points, and points that agree with it. */
@@ -82,14 +88,6 @@ function settled(
   if (sumOfSquares > doubtfulPerDegree * Math.max(rows - parameters.length - 1, 1)) return false;
   const corner = parameters[0] as number;
   return corner > (x[0] as number) && corner < (x.at(-1) as number);
-}
-
-interface Found {
-  readonly parameters: Float64Array;
-  readonly sumOfSquares: number;
-  readonly converged: boolean;
-  /** Covariance of the parameters without the scale, row by row. */
-  readonly inverse: Float64Array | undefined;
 }
 
 const nothingFound: Found = Object.freeze({
@@ -149,16 +147,16 @@ function assembled(
   const size = model.parameters.length;
   const count = x.length;
   const means = new Float64Array(size);
-  const [residuals, slopes] = arrayBlock([count, count * size]);
-  model.shapeOver(x, parameters, residuals, slopes);
+  const slopes = new Float64Array(size);
+  const residuals: number[] = [];
   const square = squareOf(weight);
   let mean = 0;
   for (let i = 0; i < count; i += 1) {
     const share = (weight[i] as number) ** 2 / square;
-    const value = (y[i] as number) - 0.5 * (residuals[i] as number);
-    residuals[i] = value;
+    const value = (y[i] as number) - 0.5 * model.shapeAt(x[i] as number, parameters, slopes);
+    residuals.push(value);
     mean += share * value;
-    for (let p = 0; p < size; p += 1) means[p] = (means[p] as number) + share * (slopes[i * size + p] as number);
+    for (let p = 0; p < size; p += 1) means[p] = (means[p] as number) + share * (slopes[p] as number);
   }
   let chiSquare = 0;
   for (let i = 0; i < count; i += 1) {
