@@ -56,6 +56,13 @@ describe("two totals, 1.17 µV in 0.1 Hz to 10 Hz and 2.06 µV in 0.1 Hz to 100 
     expectRelative(fit.rounding?.cornerHz[1] ?? 0, Math.max(...corners), 1e-9);
   });
 
+  test("enter with half a unit over √3 (JCGM 100, 4.3.7), and their errors are what that makes of floor and corner", () => {
+    for (const { stated, uncertainty } of fit.figures) expectRelative(uncertainty, half / Math.sqrt(3) / stated, 1e-12);
+    const [one, other] = fit.costs;
+    expectRelative(fit.standardErrors.cornerHz ?? 0, Math.hypot(one?.cornerHz ?? 0, other?.cornerHz ?? 0), 1e-9);
+    expectRelative(fit.standardErrors.floor ?? 0, Math.hypot(one?.floor ?? 0, other?.floor ?? 0), 1e-9);
+  });
+
   test("with the exponent only expected to be near 1, the answer says that it costs most", () => {
     const loose = fitBandFigures(totals, { unit: "V" });
     expectRelative(loose.cornerHz ?? 0, fit.cornerHz ?? 1, 1e-9);
