@@ -42,11 +42,20 @@ export function requirePossible(
   const degrees = solved.degrees;
   if (solved.model.name === "floorAndFlicker" || degrees < 1) return;
   if (solved.chiSquare <= chiSquareLimit(degrees)) return;
-  const { one, other, limits, ratio, uncertainty } = worstPair(expectedExponent(exponent), readings);
+  const { one, other, limits, ratio, uncertainty, outside } = worstPair(expectedExponent(exponent), readings);
+  if (!(outside > 0)) throw new OutOfDomainError(apartMessage(solved, readings));
   const [least, most] = limits.toSorted((a, b) => a - b);
   throw new OutOfDomainError(
     `No floor with a 1/f part gives these figures: "${other.label}" over "${one.label}" must lie between ${short(least ?? 0)} and ${short(most ?? 0)} (floor alone ${short(limits[0])}, 1/f^${short(expectedExponent(exponent))} alone ${short(limits[1])}), and it is ${short(ratio)} ± ${short(ratio * uncertainty)} (k = 1); check units, peak-to-peak factors and measurement filters.`,
   );
+}
+
+/** Where every two figures could stand, but not all of them. */
+function apartMessage({ residuals, model }: SolvedFigures, readings: readonly FigureReading[]): string {
+  const far = residuals.map((residual, index) => Math.abs(residual) * weightOf(readings[index] as FigureReading));
+  const worst = far.indexOf(Math.max(...far));
+  const off = Math.exp(Math.abs(residuals[worst] as number));
+  return `No floor with a 1/f part gives these figures together: ${model.name === "floor" ? "a floor" : "a 1/f part"} comes nearest, and "${readings[worst]?.label}" is a factor ${short(off)} off, ${short(far[worst] as number)} of its standard uncertainties; check units, peak-to-peak factors and measurement filters.`;
 }
 
 /** The largest corner (or the smallest) that the figures still allow at 95 %; undefined where they allow any. */

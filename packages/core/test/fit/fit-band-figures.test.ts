@@ -184,6 +184,17 @@ describe("figures that show no corner", () => {
     );
   });
 
+  test("three figures of which every two could stand are refused by the one that is furthest off", () => {
+    const figures: readonly BandFigure[] = [
+      { fromHz: 1, toHz: 2, rms: 1e-6, uncertainty: 0.01 },
+      { fromHz: 10, toHz: 20, rms: 3.1e-6, uncertainty: 0.01 },
+      { fromHz: 1, toHz: 1.5, rms: 0.74e-6, uncertainty: 0.01 },
+    ];
+    const run = () => fitBandFigures(figures, { unit: "V", exponent: 1 });
+    expect(run).toThrow(OutOfDomainError);
+    expect(run).toThrow(/together: a floor comes nearest, and "1 Hz to 1\.5 Hz" is a factor 1\.04 off, 3\.69 of/);
+  });
+
   test("or no floor: the 1/f part alone, and how low the corner can be", () => {
     const fit = fitBandFigures(wide(Math.SQRT2 * 1e-6 * 0.99), { unit: "V", exponent: 1 });
     expect([fit.model, fit.floor, fit.cornerLimit?.side]).toEqual(["flicker", undefined, "above"]);
