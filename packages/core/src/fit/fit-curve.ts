@@ -105,6 +105,7 @@ export function fitCurve(curve: Curve, options: FitOptions = {}): FittedCurve {
   );
   requireOneOf("model", modelNames, model);
   requireOneOf("misreadings", ["report", "downweight"], misreadings);
+  requireMeaning(model, exponent);
   const resolved = resolveExponent(exponent);
   const points = choosePoints(curve, fromHz, toHz, requireBump(curve, bump));
   const plain = trialsOf(resolved, points);
@@ -146,6 +147,14 @@ export function fitCurve(curve: Curve, options: FitOptions = {}): FittedCurve {
     findings: Object.freeze(findings),
     notes: Object.freeze([...(spectrum.notes ?? []), ...findings.map(({ message }) => message)]),
   });
+}
+
+/** A floor has no exponent: who gives both means something else. */
+function requireMeaning(model: FitOptions["model"], exponent: FitOptions["exponent"]): void {
+  if (model !== "floor" || exponent === undefined) return;
+  throw new OutOfDomainError(
+    "The model 'floor' has no 1/f part, so exponent says nothing; leave it out, or name the model floorAndFlicker.",
+  );
 }
 
 function requireOneOf(name: string, known: readonly string[], value: string | undefined): void {

@@ -137,6 +137,7 @@ describe("bad options are refused in one sentence", () => {
     [{ fromHz: 10, toHz: 5 }, /from fromHz up to a higher toHz/],
     [{ fromHz: 1.1, toHz: 1.2 }, /at least two points/],
     [{ exponent: Number.NaN }, /got NaN/],
+    [{ model: "floor", exponent: 1 }, /has no 1\/f part, so exponent says nothing/],
     [{ model: "spline" as never }, /model must be one of/],
     [{ misreadings: "hide" as never }, /misreadings must be one of report, downweight/],
     [{ expnent: 1 } as never, /no option "expnent"/],
