@@ -18,10 +18,9 @@ export function extremesCovariance({ table, start, anticorrelation }: CrossingHa
   const q = Math.min(anticorrelation, 0.9999);
   const spread = Math.sqrt(1 - q * q);
   const levels = Array.from({ length: count }, (_, index) => from + index * step);
-  const hazards = levels.map((level) => table[Math.round((level - lowestLevel) / levelStep)] as number);
-  const logChances = levels.map(
-    (level, index) => -(hazards[index] as number) - (start[Math.round((level - lowestLevel) / levelStep)] as number),
-  );
+  const at = (level: number): number => Math.round((level - lowestLevel) / levelStep);
+  const hazards = levels.map((level) => table[at(level)] as number);
+  const whole = levels.map((level, index) => (hazards[index] as number) + (start[at(level)] as number));
   let sum = 0;
   for (let high = 0; high < count; high += 1)
     for (let low = 0; low <= high; low += 1) {
@@ -29,9 +28,9 @@ export function extremesCovariance({ table, start, anticorrelation }: CrossingHa
       const peak = upper + 1 / Math.max(upper, 1);
       const follows = Math.max(0, normalTail((lower - q * peak) / spread) - normalTail(lower));
       const shared = (hazards[high] as number) * (1 - (1 - follows) ** 2);
-      // in logarithms: a long record has hazards of thousands at low levels
-      const product = (logChances[high] as number) + (logChances[low] as number);
-      const joint = Math.exp(product + shared) - Math.exp(product);
+      // Not product times expm1(shared): with 1e5 crossings a record that is 0 times infinity.
+      const apart = (whole[high] as number) + (whole[low] as number);
+      const joint = Math.exp(shared - apart) - Math.exp(-apart);
       sum += high === low ? joint : 2 * joint;
     }
   return sum * step * step;

@@ -13,11 +13,6 @@ export function centralNormalQuantile(q: number): number {
   return q * ratio(central, 0.180625 - q * q);
 }
 
-/** Normal value that a share of all values lies below. */
-export function normalScore(share: number): number {
-  return share > 0.5 ? upperNormalQuantile(1 - share) : -upperNormalQuantile(share);
-}
-
 type Coefficients = readonly (readonly [over: number, under: number])[];
 
 const central: Coefficients = [

@@ -2,6 +2,7 @@ import { crossingHazard } from "./crossing-hazard.js";
 import { extremesCovariance } from "./extremes-covariance.js";
 import { largestOf, type WeightedValues } from "./largest-of.js";
 import { narrowBandRanges } from "./narrow-band-range.js";
+import { principalPaths } from "./principal-paths.js";
 import { rangeMixture } from "./range-mixture.js";
 import { rangeOfNormals } from "./range-of-normals.js";
 import type { RecordDensity } from "./record-density.js";
@@ -31,13 +32,19 @@ export interface RecordRangeOptions {
 /** Paths drawn for the slow part; what the fast part adds is integrated and needs none. */
 const pathCount = 256;
 const pathPoints = 48;
-/** Records this short are drawn sample by sample, eight times as often, for nothing else is drawn. */
+/** Records this short are drawn sample by sample. */
 const fewSamples = 64;
-/** noise slower than 6/T moves through the record as a path; half the power at that frequency counts as slow. */
+/** Anticorrelation from which noise is said to oscillate; then so many samples and components may be drawn, in 0.3 s. */
+const oscillation = 0.4;
+const mostDrawn = 2048;
+const mostModes = 160;
+const mostProducts = 1e5;
+/** Noise slower than 6/T moves through the record as a path; half the power at that frequency counts as slow. */
 const slowTurns = 6;
 /** Below this share of the record's power a slow path changes nothing. */
 const leastSlow = 3e-3;
-const mostLags = 128;
+const nearLags = 320;
+const farLags = 160;
 /** White noise up to half the sample rate comes out at 1e-3 or less, for the nodes begin a little above 0 Hz. */
 const negligibleCorrelation = 1.5e-3;
 
@@ -48,22 +55,15 @@ export function recordRange(record: RecordDensity, options: RecordRangeOptions):
   const lags = lagsOf(samples);
   const structure = structureFunction(record, secondsOf(lags, sampleSeconds));
   const independent = structure.every((value) => Math.abs(value - power) <= negligibleCorrelation * power);
-  const found = samples <= fewSamples ? drawn(record, options) : narrowOrCrossed(record, structure, lags, options);
+  const oscillates = structure.some((value) => value > (1 + oscillation) * power);
+  const drawable = samples <= fewSamples || oscillates;
+  const found =
+    (drawable ? drawn(record, options, power) : undefined) ??
+    (oscillates ? swelling(record, options, structure, power) : undefined) ??
+    crossed(record, lags, options);
   const one = independent ? independentRange(samples, power) : found;
   const largest = largestOf(found.distribution, records, one);
   return { ...largest, route: independent ? "independent samples" : found.route };
-}
-
-function narrowOrCrossed(
-  record: RecordDensity,
-  structure: Float64Array,
-  lags: readonly number[],
-  options: RecordRangeOptions,
-): Found {
-  const most = structure.reduce((largest, gap) => Math.max(largest, gap), 0);
-  const anticorrelation = most / recordPower(record) - 1;
-  const ranges = narrowBandRanges(record, (options.samples - 1) * options.sampleSeconds, anticorrelation);
-  return ranges === undefined ? crossed(record, lags, options) : foundFrom(ranges, "narrow band");
 }
 
 interface Found {
@@ -78,10 +78,36 @@ function independentRange(samples: number, power: number): { mean: number; stand
   return { mean: mean * Math.sqrt(power), standardDeviation: standardDeviation * Math.sqrt(power) };
 }
 
-function drawn(record: RecordDensity, { samples, sampleSeconds }: RecordRangeOptions): Found {
-  const lags = Array.from({ length: samples }, (_, lag) => lag);
-  const { paths } = slowPaths(structureFunction(record, secondsOf(lags, sampleSeconds)), 8 * pathCount);
-  return foundFrom(Float64Array.from(paths, (path) => Math.max(...path) - Math.min(...path)).toSorted(), "few samples");
+/**
+ * A record of few samples; or of noise that oscillates and has few components, where one swell may fill the record and
+ * crossings are no Poisson process. It is thinned, if a trace, to no fewer than 20 samples a turn.
+ */
+function drawn(
+  record: RecordDensity,
+  { samples, sampleSeconds }: RecordRangeOptions,
+  power: number,
+): Found | undefined {
+  const every = Math.ceil((samples - 1) / mostDrawn);
+  const taken = Math.floor((samples - 1) / every) + 1;
+  const step = ((samples - 1) * sampleSeconds) / (taken - 1);
+  const lags = Array.from({ length: taken }, (_, lag) => lag);
+  const structure = structureFunction(record, secondsOf(lags, step));
+  if (every > 1 && (structure[1] as number) > 0.05 * power) return undefined;
+  const paths = principalPaths(structure, taken <= fewSamples ? taken : Math.min(mostModes, mostProducts / taken));
+  if (paths === undefined) return undefined;
+  return foundFrom(Float64Array.from(paths, (path) => rangeIn(path)).toSorted(), "few samples");
+}
+
+/** Noise of so narrow a band and so many turns that only its envelope is drawn. */
+function swelling(
+  record: RecordDensity,
+  { samples, sampleSeconds }: RecordRangeOptions,
+  structure: Float64Array,
+  power: number,
+): Found | undefined {
+  const anticorrelation = structure.reduce((most, value) => Math.max(most, value), 0) / power - 1;
+  const ranges = narrowBandRanges(record, (samples - 1) * sampleSeconds, anticorrelation);
+  return ranges === undefined ? undefined : foundFrom(ranges, "narrow band");
 }
 
 /** Moments of ranges that were drawn. */
@@ -127,14 +153,24 @@ function crossed(
   };
 }
 
-/** All lags of a short record, else about as many spaced geometrically. */
+function rangeIn(path: Float64Array): number {
+  let [low, high] = [Number.POSITIVE_INFINITY, Number.NEGATIVE_INFINITY];
+  for (const value of path) {
+    if (value < low) low = value;
+    if (value > high) high = value;
+  }
+  return high - low;
+}
+
+/** Every lag up to some five turns of a trace, then geometrically spaced ones. */
 function lagsOf(samples: number): number[] {
   const most = samples - 1;
-  if (most <= mostLags) return Array.from({ length: most }, (_, index) => index + 1);
-  const lags = Array.from({ length: mostLags }, (_, index) =>
-    Math.round(Math.exp((Math.log(most) * index) / (mostLags - 1))),
+  const near = Array.from({ length: Math.min(most, nearLags) }, (_, index) => index + 1);
+  if (most <= nearLags) return near;
+  const far = Array.from({ length: farLags }, (_, index) =>
+    Math.round(nearLags * Math.exp((Math.log(most / nearLags) * (index + 1)) / farLags)),
   );
-  return [...new Set(lags)];
+  return [...new Set([...near, ...far])];
 }
 
 function secondsOf(lags: readonly number[], sampleSeconds: number): number[] {

@@ -148,6 +148,18 @@ const cases: readonly Case[] = [
     },
   },
   {
+    name: "a resonance of Q 50 at 5 Hz, 50 s",
+    spectrum: white,
+    options: {
+      fromHz: 0.1,
+      toHz: 50,
+      weighting: resonator({ centreHz: 5, q: 50 }),
+      recordSeconds: 50,
+      sampleRateHz: 200,
+    },
+    size: [19, 20],
+  },
+  {
     name: "a polyline with a hump, 0.1 Hz to 100 Hz, 5 s",
     spectrum: stepped,
     options: { fromHz: 0.1, toHz: 100, recordSeconds: 5 },
