@@ -6,6 +6,8 @@ import type { Pixel } from "./axis-fit.js";
 const longestPath = 2e7;
 const mostVertices = 2e6;
 
+const noMove = "Path data must begin with a move command (M or m) and hold at least one.";
+
 /**
  * SVG path data (W3C SVG 2, chapter 9) as polylines, one a subpath, curves flattened so that no chord is further from its
  * curve than the tolerance: cubic and quadratic pieces by the second differences of their control points (Wang's bound),
@@ -41,6 +43,14 @@ export function flattenPath(pathData: string, tolerance: number): Pixel[][] {
 }
 
 function parsed(pathData: string): readonly SVGCommand[] {
+  // The parser joins what no command takes to the next number: -M100 50 would be x = -100.
+  if (/^\s*[^\sMm]/.test(pathData)) throw new MalformedDataError(noMove);
+  const close = /[Zz]\s*[^\sA-Za-z]/.exec(pathData);
+  if (close !== null)
+    throw new MalformedDataError(
+      `Path data is broken after the close at character ${close.index + 1}: nothing but a command may follow a close.`,
+      { index: close.index },
+    );
   try {
     const { commands } = new SVGPathData(pathData);
     if (commands.length > 0 && commands[0]?.type === SVGPathData.MOVE_TO) return commands;
@@ -49,7 +59,7 @@ function parsed(pathData: string): readonly SVGCommand[] {
       `Path data could not be read as the SVG path grammar: ${error instanceof Error ? error.message : String(error)}`,
     );
   }
-  throw new MalformedDataError("Path data must begin with a move command (M or m) and hold at least one.");
+  throw new MalformedDataError(noMove);
 }
 
 /** Where the pen is, where it has been, and the last control points for smooth curves. Lives for one path. */

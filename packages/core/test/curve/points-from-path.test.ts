@@ -51,6 +51,21 @@ test("two curves in one path are refused with the place where they overlap", () 
   );
 });
 
+// what a parser may join to the next number: -M100 is then x = -100, a decade below, and .M300 is 0.3
+test.each(["-", ".", "+", "1", "0 ", "5 6", ","])(
+  "%o before the first move or after a close is refused, not read on",
+  (stray) => {
+    const good = "M300 225L700 225";
+    const message = /must begin with a move command|nothing but a command may follow a close/;
+    expect(() => densities(`${stray}${good}`)).toThrow(message);
+    expect(() => densities(`M100 50L100 50z${stray}${good}`)).toThrow(message);
+    expect(() => densities(`M100 50L100 50 z \n${stray}${good}`)).toThrow(message);
+    expect(() => densities(`M100 50L100 50z${stray}`)).toThrow(message);
+    expect(densities(` \n${good}`)).toHaveLength(2);
+    expect(densities(`M100 50L100 50z\t${good}`)).toHaveLength(3);
+  },
+);
+
 describe("refusals", () => {
   test.each<[string, PathOptions, RegExp]>([
     ["M100 50V225", {}, /at least two places/],
