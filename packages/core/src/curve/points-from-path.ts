@@ -49,7 +49,8 @@ export function pointsFromPath(calibration: AxesCalibration, pathData: string, o
   requirePositive("tolerancePixels", tolerancePixels, "pixels");
   requirePositive("pickErrorPixels", pickErrorPixels, "pixels");
   const [a, b, c, d, e, f] = matrix;
-  const scale = Math.sqrt(Math.max(a * a + b * b, c * c + d * d));
+  // the larger singular value: what the matrix stretches most, columns need not be at right angles
+  const scale = 0.5 * (Math.hypot(a + d, b - c) + Math.hypot(a - d, b + c));
   if (!(matrix.every(Number.isFinite) && Math.abs(a * d - b * c) > 0))
     throw new OutOfDomainError(
       `matrix must be six finite numbers [a, b, c, d, e, f] that can be inverted; got ${matrix.join(", ")}.`,

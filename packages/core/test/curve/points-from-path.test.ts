@@ -31,6 +31,30 @@ test("a matrix leads from the page to the pixels: scale, turn and shift", () => 
   close(densities("M50 100L225 300v400", { matrix: [0, 1, 1, 0, 0, 0] }), [1e-7, 1e-8, 1e-8]);
 });
 
+test("the tolerance holds on the plot, also along the direction that a shearing matrix stretches most", () => {
+  const linear = { kind: "linear" as const, ticks: [-1e4, 1e4].map((pixel) => ({ pixel, value: pixel + 10001 })) };
+  const flat = calibrateAxes({ unit: "V", frequency: linear, density: linear });
+  const matrix = [1, 0.5, 0.5, 1, 0, 0] as const;
+  const { points } = pointsFromPath(flat, "M0 0Q1060 -740 2000 -1600", { matrix, tolerancePixels: 0.1 });
+  const pixels = points.map(({ frequency, density }) => ({ x: frequency - 10001, y: density - 10001 }));
+  let worst = 0;
+  for (let step = 0; step <= 2000; step += 1) {
+    const t = step / 2000;
+    const [u, v] = [2 * t * (1 - t) * 1060 + t * t * 2000, -2 * t * (1 - t) * 740 - t * t * 1600];
+    const [x, y] = [u + 0.5 * v, 0.5 * u + v];
+    const next = Math.max(
+      1,
+      pixels.findIndex((place) => place.x >= x),
+    );
+    const [from, to] = [pixels[next - 1], pixels[next]];
+    if (from === undefined || to === undefined) continue;
+    const [dx, dy] = [to.x - from.x, to.y - from.y];
+    worst = Math.max(worst, Math.abs(dy * (x - from.x) - dx * (y - from.y)) / Math.hypot(dx, dy));
+  }
+  expect(worst).toBeGreaterThan(0.05);
+  expect(worst).toBeLessThan(0.1);
+});
+
 test("a step is a step: both of its ends stay, a thousandth of a pixel apart", () => {
   const { points } = pointsFromPath(plot, "M100 50H300V225H700");
   expect(points.map(({ density }) => density.toPrecision(3))).toEqual(["1.00e-7", "1.00e-7", "1.00e-8", "1.00e-8"]);
