@@ -110,6 +110,24 @@ describe("refusals", () => {
   });
 });
 
+/** The grammar of SVG 2, 9.3.9, written out a second time: what is accepted must be a path. */
+const grammar = (() => {
+  const number = String.raw`[+-]?(?:\d+\.?\d*|\.\d+)(?:[eE][+-]?\d+)?`;
+  const gap = String.raw`(?:\s+,?\s*|,\s*)?`;
+  const repeated = (unit: string): string => String.raw`\s*${unit}(?:${gap}${unit})*`;
+  const numbers = (count: number): string => Array.from({ length: count }, () => number).join(gap);
+  const arc = [number, number, number, "[01]", "[01]", number, number].join(gap);
+  const commands = [
+    `[MmLlTt]${repeated(numbers(2))}`,
+    `[HhVv]${repeated(number)}`,
+    `[Cc]${repeated(numbers(6))}`,
+    `[SsQq]${repeated(numbers(4))}`,
+    `[Aa]${repeated(arc)}`,
+    "[Zz]",
+  ];
+  return new RegExp(String.raw`^\s*(?=[Mm])(?:(?:${commands.join("|")})\s*)+$`);
+})();
+
 test("1000 mutated paths give the module's own error or a curve of one density a frequency", () => {
   const uniform = uniformFrom(77);
   const good = "M100 50C150 120 250 210 300 225S420 230 500 225a30 10 0 0 1 60 0L600,225h50t20 -1 30 1";
@@ -124,6 +142,7 @@ test("1000 mutated paths give the module's own error or a curve of one density a
     }
     try {
       const { points } = pointsFromPath(plot, path);
+      expect(path).toMatch(grammar);
       expect(points.length).toBeGreaterThan(1);
       for (const [index, { frequency, density, uncertainty }] of points.entries()) {
         expect(frequency).toBeGreaterThan(points[index - 1]?.frequency ?? 0);

@@ -66,8 +66,8 @@ test("floor, corner and rms of 500 plots, drawn, turned and picked with half a p
     const plot = calibrateAxes({ ...axes, allowFarExtrapolation: true });
     const curve = pointsFromPicks(plot, picks, { pickErrorPixels: sigma });
     const fit = fitCurve(curve, { model: "floorAndFlicker", exponent: 1, beyond: "segments" });
-    // a band well inside the points; the fit carries the calibration's errors too
-    const band = { fromHz: 0.2, toHz: 10 };
+    // the fit carries the calibration's errors too
+    const band = { fromHz: 0.1, toHz: 10 };
     // floor and corner with everything that moves them: the picks through the fit, the calibration through all points
     const moved = uncertaintyOf(fit);
     scores.floor.push(Math.log((fit.floor ?? 0) / truth.floor) / moved.floor);
