@@ -63,7 +63,8 @@ export function crossingHazard(noise: SampledNoise): CrossingHazard {
   return { table, start, top, anticorrelation };
 }
 
-const smoothEvenness = Math.PI / 4;
+const singleEvenness = Math.PI / 4;
+const smoothEvenness = 0.6;
 const roughEvenness = 0.36;
 const thinningStep = 0.5;
 const thinningLevels = 18;
@@ -102,16 +103,17 @@ function clumpThinning(noise: SampledNoise, anticorrelation: number): Float64Arr
 
 /**
  * Square of the mean stay of a clump over its mean square, at high levels: π/4 where the envelope is smooth and its
- * excursions are parabolas, 1/4 where it is rough (a resonance: its envelope wanders as one RC pole does; 0.36 at the levels
- * that records reach, found by simulation). Which of them shows in the power of time with which the correlation falls from
+ * excursions are parabolas, 1/4 where it is rough (a resonance: its envelope wanders as one RC pole does). At the levels that
+ * records reach, simulation finds 0.6 and 0.36. Which of them shows in the power of time with which the correlation falls from
  * crest to crest: nearly 2, or 1.
  */
 function clumpEvenness({ gaps }: SampledNoise, anticorrelation: number): number {
   const [first, second, , fourth] = crestGaps(gaps);
-  if (first === undefined || second === undefined || fourth === undefined) return smoothEvenness;
+  if (first === undefined || second === undefined || fourth === undefined) return singleEvenness;
   const power = Math.log2(Math.max(1, (fourth - second) / (second - first)));
-  const rough = Math.max(0, Math.min(1, (1.6 - power) / 0.6)) * anticorrelation ** 16;
-  return smoothEvenness * (roughEvenness / smoothEvenness) ** rough;
+  const rough = Math.max(0, Math.min(1, (1.6 - power) / 0.6));
+  const narrow = smoothEvenness * (roughEvenness / smoothEvenness) ** rough;
+  return singleEvenness * (narrow / singleEvenness) ** (anticorrelation ** 16);
 }
 
 /** 1 − correlation at its first four crests, each the vertex of the parabola through three lags. */

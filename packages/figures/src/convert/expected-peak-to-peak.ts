@@ -68,7 +68,8 @@ const mostKnots = 1000;
  * Up-crossings of a level come as a Poisson process at Rice's rate; where samples are few the chance that a sample crosses
  * is taken exactly, and crossings that come in clumps count once. Noise slower than the record moves through it as a path
  * and is averaged over. White samples have the exact range of independent normals. Against simulation of some 50 spectra,
- * bands and records the mean is within 2.5 % and the spread within 7 % (narrow lines up to 7 % and 12 %, docs/method.md); a call takes 15 to 300 ms.
+ * bands and records the mean is within 2.5 % and the spread within 7 % (a line out of a
+ * broad floor: up to 7 % and 12 %, docs/method.md); a call takes 15 to 600 ms.
  *
  * @param spectrum - one-sided power density, unit²/Hz, of Gaussian, stationary noise.
  * @param options - `fromHz`, `toHz`, `weighting`, `recordSeconds`, `sampleRateHz`, `records`, `coupling`.

@@ -160,6 +160,13 @@ const cases: readonly Case[] = [
     size: [19, 20],
   },
   {
+    name: "narrow band of a thousand turns, 99 Hz to 101 Hz, 10 s",
+    spectrum: white,
+    options: { fromHz: 99, toHz: 101, recordSeconds: 10 },
+    simulatedHz: 2000,
+    size: [20, 12],
+  },
+  {
     name: "a polyline with a hump, 0.1 Hz to 100 Hz, 5 s",
     spectrum: stepped,
     options: { fromHz: 0.1, toHz: 100, recordSeconds: 5 },
